@@ -1,0 +1,21 @@
+import { z } from 'zod';
+import { shortText } from '../common.js';
+
+const isTimeZone = (zone: string): boolean => {
+  try {
+    new Intl.DateTimeFormat('en', { timeZone: zone });
+    return true;
+  } catch {
+    return false;
+  }
+};
+
+export const settings = z.object({
+  firmName: shortText('the name of the firm'),
+  timeZone: z.string().refine(isTimeZone, 'No such time zone; write a name such as Australia/Hobart'),
+  units: z.enum(['metric', 'feet']),
+  currency: z.string().regex(/^[A-Z]{3}$/, 'Three capital letters, such as AUD (ISO 4217)'),
+  /** Positions outside on-shift time are personal data and are dropped unless the firm says otherwise. */
+  keepPositionsOffShift: z.boolean(),
+});
+export type Settings = z.infer<typeof settings>;

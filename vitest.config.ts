@@ -1,0 +1,45 @@
+import { defineConfig } from 'vitest/config';
+
+// Workspaces are read from their sources, so a test never runs against a stale build.
+const source = {
+  resolve: { conditions: ['hubtack-source'] },
+  ssr: { resolve: { conditions: ['hubtack-source', 'node', 'import', 'default'] } },
+};
+
+export default defineConfig({
+  test: {
+    reporters: ['default', './tests/harness/summary-reporter.ts'],
+    projects: [
+      {
+        ...source,
+        test: {
+          name: 'unit',
+          include: ['{contracts,backend,simulators,dashboard}/src/**/*.spec.{ts,tsx}', 'drizzle/**/*.spec.ts'],
+          exclude: ['**/dist/**', '**/node_modules/**'],
+          testTimeout: 20_000,
+        },
+      },
+      {
+        ...source,
+        test: {
+          name: 'integration',
+          include: ['tests/{reference,integration,faults}/**/*.spec.ts'],
+          exclude: ['**/dist/**', '**/node_modules/**'],
+          testTimeout: 60_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        ...source,
+        test: {
+          name: 'e2e',
+          include: ['tests/e2e/**/*.spec.ts'],
+          exclude: ['**/dist/**', '**/node_modules/**'],
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+          fileParallelism: false,
+        },
+      },
+    ],
+  },
+});
