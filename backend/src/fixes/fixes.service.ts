@@ -1,0 +1,61 @@
+import { Injectable } from '@nestjs/common';
+import { fixStateOfQuality } from '@hubtack/contracts/fixes/fix-state.js';
+import type { EpochSeries, TimelineAnswer } from '@hubtack/contracts/fixes/timeline.js';
+import { Clock } from '../common/clock.js';
+import type { Epoch } from './epoch.js';
+import { EpochRepository } from './epoch.repository.js';
+import { partition, totalsOf, type HeardSpan } from './timeline.js';
+import { TrackStore } from './track.store.js';
+
+/** Points that a chart of two hours can show. */
+const MAX_POINTS = 720;
+
+const iso = (time: number): string => new Date(time).toISOString();
+
+@Injectable()
+export class FixesService {
+  constructor(
+    private readonly tracks: TrackStore,
+    private readonly epochs: EpochRepository,
+    private readonly clock: Clock,
+  ) {}
+
+  timeline(roverId: number, from: number, to: number): TimelineAnswer {
+    const parts = partition(this.tracks.spansOf(roverId, from, to), from, to, this.clock.now());
+    return {
+      spans: parts.map(({ state, start, end }) => ({ state, start: iso(start), end: iso(end) })),
+      totals: totalsOf(parts),
+    };
+  }
+
+  /** Heard spans that overlap or touch [from, to]. */
+  spans(roverId: number, from: number, to: number): HeardSpan[] {
+    return this.tracks.spansOf(roverId, from, to);
+  }
+
+  /** The newest epoch, when one is kept still. */
+  latest(roverId: number): Epoch | null {
+    return this.tracks.get(roverId).latest;
+  }
+
+  /** Time of the newest epoch, ms UTC; null when never heard. */
+  lastHeardAt(roverId: number): number | null {
+    return this.tracks.get(roverId).tail?.lastTime ?? null;
+  }
+
+  /** Epochs of a window for a chart, every n-th so that there are at most MAX_POINTS. */
+  series(roverId: number, from: number, to: number): EpochSeries {
+    const epochs = this.epochs.list(roverId, from, to);
+    const every = Math.max(1, Math.ceil(epochs.length / MAX_POINTS));
+    const points = epochs
+      .filter((_, index) => (epochs.length - 1 - index) % every === 0)
+      .map(({ time, quality, satellites, ageMs, hdop }) => ({
+        at: time,
+        state: fixStateOfQuality(quality),
+        satellites,
+        ageMs,
+        hdop,
+      }));
+    return { points };
+  }
+}
