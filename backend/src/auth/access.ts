@@ -6,6 +6,8 @@ import type { Request } from 'express';
 /** The signed-in person or display, as the guard puts it on the request. */
 export interface Viewer {
   sessionId: string;
+  /** When the sign-in is over by itself, ms UTC. */
+  signInEndsAt: number;
   userId: number | null;
   name: string;
   role: ViewerRole;

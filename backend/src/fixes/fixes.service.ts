@@ -4,7 +4,7 @@ import type { EpochSeries, TimelineAnswer } from '@hubtack/contracts/fixes/timel
 import { Clock } from '../common/clock.js';
 import type { Epoch } from './epoch.js';
 import { EpochRepository } from './epoch.repository.js';
-import { partition, totalsOf, type HeardSpan } from './timeline.js';
+import { HOLD_MS, partition, totalsOf, type HeardSpan } from './timeline.js';
 import { TrackStore } from './track.store.js';
 
 /** Points that a chart of two hours can show. */
@@ -41,6 +41,12 @@ export class FixesService {
   /** Time of the newest epoch, ms UTC; null when never heard. */
   lastHeardAt(roverId: number): number | null {
     return this.tracks.get(roverId).tail?.lastTime ?? null;
+  }
+
+  /** Until when the newest epoch speaks for the rover, ms UTC; null when never heard. */
+  heldUntil(roverId: number): number | null {
+    const lastTime = this.lastHeardAt(roverId);
+    return lastTime === null ? null : lastTime + HOLD_MS;
   }
 
   /** Epochs of a window for a chart, every n-th so that there are at most MAX_POINTS. */
