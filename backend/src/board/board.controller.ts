@@ -1,6 +1,11 @@
 import { Controller, Get, Headers, Query, Res, UseFilters } from '@nestjs/common';
 import { ApiOkResponse, ApiProduces, ApiTags } from '@nestjs/swagger';
-import { boardSnapshot, boardToday, type BoardSnapshot, type BoardToday } from '@hubtack/contracts/board/lane.js';
+import {
+  boardSnapshot,
+  boardToday,
+  type BoardSnapshot,
+  type BoardToday,
+} from '@hubtack/contracts/board/lane.js';
 import type { Response } from 'express';
 import { z } from 'zod';
 import { AllowRoles, CurrentViewer, type Viewer } from '../auth/access.js';

@@ -1,4 +1,9 @@
-import { Injectable, Logger, type BeforeApplicationShutdown, type OnApplicationBootstrap } from '@nestjs/common';
+import {
+  Injectable,
+  Logger,
+  type BeforeApplicationShutdown,
+  type OnApplicationBootstrap,
+} from '@nestjs/common';
 import type { BoardSnapshot, BoardToday, Lane } from '@hubtack/contracts/board/lane.js';
 import type { Response } from 'express';
 import { addTotals, noTotals } from '../fixes/timeline.js';
@@ -81,7 +86,11 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
       crews.set(crewId, crew);
     }
     const { start: dayStart, end: dayEnd } = this.lanes.today;
-    return { dayStart, dayEnd, crews: [...crews.values()].sort((a, b) => a.crewName.localeCompare(b.crewName)) };
+    return {
+      dayStart,
+      dayEnd,
+      crews: [...crews.values()].sort((a, b) => a.crewName.localeCompare(b.crewName)),
+    };
   }
 
   /** Connects a board; its stream ends by `endsAt`. */

@@ -8,10 +8,11 @@ import type { Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { HeardSpan } from '../fixes/timeline.js';
+import type { CrewDay } from '../shifts/on-shift.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 import { baseDistance } from './base-distance.js';
 import { nothingMoved, type LaneSource, type Moved } from './frame.js';
-import { RIBBON_MS, dutyAt, laneChangeOf, laneOf, stateAt, type CrewDay, type LaneFacts } from './live-lane.js';
+import { RIBBON_MS, dutyAt, laneChangeOf, laneOf, stateAt, type LaneFacts } from './live-lane.js';
 import { RosterRepository, type RosterEntry } from './roster.repository.js';
 
 /** A rover without a crew has a lane only while it has been heard of in this time. */
@@ -74,7 +75,8 @@ export class LanesStore implements LaneSource {
   /** Reads roster, shifts and day anew; answers what is to be described anew, and who had it before. */
   reload(): Moved {
     const now = this.clock.now();
-    const zone = this.database.select({ zone: firmSettings.timeZone }).from(firmSettings).get()?.zone ?? 'UTC';
+    const zone =
+      this.database.select({ zone: firmSettings.timeZone }).from(firmSettings).get()?.zone ?? 'UTC';
     this.day = localDayOf(now, zone);
     const before = this.lanes;
     const crewDays = new Map<number, CrewDay>();
@@ -127,7 +129,8 @@ export class LanesStore implements LaneSource {
   private movedSince(before: ReadonlyMap<number, LiveLane>): Moved {
     const moved = nothingMoved();
     for (const id of [...before.keys(), ...this.lanes.keys()]) moved.whole.add(id);
-    for (const [id, { entry }] of before) if (entry.crewId !== null) moved.left.set(id, new Set([entry.crewId]));
+    for (const [id, { entry }] of before)
+      if (entry.crewId !== null) moved.left.set(id, new Set([entry.crewId]));
     return moved;
   }
 

@@ -4,17 +4,11 @@ import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
 import { clip, intersect, totalMs, type Interval } from '../common/interval.js';
 import type { Epoch } from '../fixes/epoch.js';
 import { HOLD_MS, clipSpans, noTotals, totalsOf, type HeardSpan } from '../fixes/timeline.js';
+import type { CrewDay } from '../shifts/on-shift.js';
 import type { RosterEntry } from './roster.repository.js';
 
 /** How far back the ribbon reaches. */
 export const RIBBON_MS = 3_600_000;
-
-/** When a crew is paid to have a fix today; `noShiftSet` takes the first to the last heard instant instead. */
-export interface CrewDay {
-  basis: 'marks' | 'pattern' | 'noShiftSet';
-  onShift: Interval[];
-  pauses: Interval[];
-}
 
 export interface LaneFacts {
   entry: RosterEntry;
@@ -121,7 +115,9 @@ export function hourTotals(facts: LaneFacts, now: number): { start: number; tota
   for (let start = facts.day.start; start < Math.min(now, facts.day.end); start += RIBBON_MS) {
     const hour = clip(onShift, { start, end: start + RIBBON_MS });
     const totals = totalsOf(
-      facts.spans.flatMap(({ state, ...span }) => intersect([span], hour).map((part) => ({ state, ...part }))),
+      facts.spans.flatMap(({ state, ...span }) =>
+        intersect([span], hour).map((part) => ({ state, ...part })),
+      ),
     );
     const { fixedMs, floatMs, codeMs, noneMs } = totals;
     totals.silentMs = totalMs(hour) - fixedMs - floatMs - codeMs - noneMs;

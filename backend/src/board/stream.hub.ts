@@ -101,7 +101,12 @@ export class StreamHub {
     if (frame) reader.write(frame, now);
   }
 
-  private frameFor(audience: Audience, moved: Moved, ribbons: ReadonlySet<number>, now: number): Buffer | null {
+  private frameFor(
+    audience: Audience,
+    moved: Moved,
+    ribbons: ReadonlySet<number>,
+    now: number,
+  ): Buffer | null {
     const event = lanesEventOf(audience, moved, ribbons, this.source, now);
     return event ? Buffer.from(eventText('lanes', event, this.cursor)) : null;
   }

@@ -56,8 +56,7 @@ export class ProblemFilter implements ExceptionFilter {
       response.destroy();
       return;
     }
-    const known =
-      error instanceof HttpException ? error : (bodyFault(error) ?? storageProblem(error));
+    const known = error instanceof HttpException ? error : (bodyFault(error) ?? storageProblem(error));
     const status = known?.getStatus() ?? 500;
     const correlationId = randomUUID();
     if (!known || status >= 500) this.logger.error({ correlationId, err: error }, 'request failed');
