@@ -9,7 +9,15 @@ try {
   cpSync('drizzle/migrations', folder, { recursive: true });
   const before = readdirSync(folder).length;
   kit('check', '--dialect', 'sqlite', '--out', folder);
-  const said = kit('generate', '--dialect', 'sqlite', '--schema', 'drizzle/dist/schema/index.js', '--out', folder);
+  const said = kit(
+    'generate',
+    '--dialect',
+    'sqlite',
+    '--schema',
+    'drizzle/dist/schema/index.js',
+    '--out',
+    folder,
+  );
   if (readdirSync(folder).length !== before || !said.includes('No schema changes')) {
     console.error('The schema has changes without a migration: run `npm run db:generate` and read the SQL.');
     process.exitCode = 1;

@@ -1,17 +1,56 @@
 import { Module, type DynamicModule } from '@nestjs/common';
+import { ScheduleModule } from '@nestjs/schedule';
+import { LoggerModule } from 'nestjs-pino';
 import { AuditModule } from './audit/audit.module.js';
+import { AuthModule } from './auth/auth.module.js';
+import { BoardModule } from './board/board.module.js';
 import { ChangesModule } from './common/changes.js';
 import { ClockModule } from './common/clock.js';
 import { ConfigModule } from './config/config.module.js';
 import type { Environment } from './config/environment.js';
+import { CorrectionsModule } from './corrections/corrections.module.js';
+import { CrewsModule } from './crews/crews.module.js';
 import { DatabaseModule } from './database/database.module.js';
+import { DisplaysModule } from './displays/displays.module.js';
+import { FixesModule } from './fixes/fixes.module.js';
+import { HealthModule } from './health/health.module.js';
+import { IngestModule } from './ingest/ingest.module.js';
+import { MetricsModule } from './metrics/metrics.module.js';
+import { loggingOf } from './operate/logging.js';
+import { OperateModule } from './operate/operate.module.js';
+import { RoversModule } from './rovers/rovers.module.js';
+import { SettingsModule } from './settings/settings.module.js';
+import { SitesModule } from './sites/sites.module.js';
+import { UsersModule } from './users/users.module.js';
 
 @Module({})
 export class AppModule {
   static of(environment: Environment): DynamicModule {
     return {
       module: AppModule,
-      imports: [ConfigModule.of(environment), DatabaseModule, ClockModule, ChangesModule, AuditModule],
+      imports: [
+        ConfigModule.of(environment),
+        LoggerModule.forRoot(loggingOf(environment)),
+        ScheduleModule.forRoot(),
+        DatabaseModule,
+        ClockModule,
+        ChangesModule,
+        AuditModule,
+        MetricsModule,
+        AuthModule,
+        UsersModule,
+        DisplaysModule,
+        SettingsModule,
+        CrewsModule,
+        SitesModule,
+        RoversModule,
+        CorrectionsModule,
+        FixesModule,
+        IngestModule,
+        BoardModule,
+        HealthModule,
+        OperateModule,
+      ],
     };
   }
 }

@@ -2,18 +2,69 @@ import 'reflect-metadata';
 import { StandardSchemaValidationPipe } from '@nestjs/common';
 import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
+import { DocumentBuilder, SwaggerModule } from '@nestjs/swagger';
+import cookieParser from 'cookie-parser';
+import { json, type NextFunction, type Request, type RequestHandler, type Response } from 'express';
+import helmet from 'helmet';
+import { Logger } from 'nestjs-pino';
 import { AppModule } from './app.module.js';
 import { ProblemException } from './common/problem.exception.js';
 import { ProblemFilter } from './common/problem.filter.js';
 import type { Environment } from './config/environment.js';
+import { serveDashboard } from './operate/dashboard-files.js';
 
 const pointer = (path: readonly unknown[] | undefined): string =>
-  (path ?? []).map((part) => `/${String((part as { key?: unknown })?.key ?? part)}`).join('');
+  (path ?? []).map((part) => `/${String((part as { key?: unknown } | null)?.key ?? part)}`).join('');
+
+/** Rovers post here by the thousand and bring no cookies: nothing that is for browsers stands in front of it. */
+const notForRovers =
+  (handler: RequestHandler): RequestHandler =>
+  (request: Request, response: Response, next: NextFunction) =>
+    request.url.startsWith('/api/ingest/') ? next() : handler(request, response, next);
+
+const security = helmet({
+  contentSecurityPolicy: {
+    directives: {
+      defaultSrc: ["'self'"],
+      // Fluent UI writes its style rules into the page.
+      styleSrc: ["'self'", "'unsafe-inline'"],
+      imgSrc: ["'self'", 'data:', 'blob:'],
+      fontSrc: ["'self'", 'data:'],
+      connectSrc: ["'self'"],
+      frameAncestors: ["'none'"],
+      // Set by whatever ends TLS in front; plain http on loopback must go on working.
+      upgradeInsecureRequests: null,
+    },
+  },
+  strictTransportSecurity: false,
+});
+
+const noStore: RequestHandler = (request, response, next) => {
+  if (request.url.startsWith('/api/')) response.setHeader('Cache-Control', 'no-store');
+  next();
+};
+
+function describeApi(app: NestExpressApplication): void {
+  const config = new DocumentBuilder()
+    .setTitle('Hubtack')
+    .setDescription('Rovers in, board out. `x-access` of each route says who may.')
+    .setVersion('1')
+    .addBearerAuth({ type: 'http', scheme: 'bearer', description: 'Rover key' })
+    .build();
+  SwaggerModule.setup('api/docs', app, () => SwaggerModule.createDocument(app, config), {
+    jsonDocumentUrl: 'api/openapi.json',
+  });
+}
 
 /** Settings that every way of running the application shares: main.ts and the tests. */
 export function configureApplication(app: NestExpressApplication): void {
   app.setGlobalPrefix('api', { exclude: ['health/*path', 'metrics'] });
   app.disable('x-powered-by');
+  app.disable('etag');
+  app.use(notForRovers(security));
+  app.use(notForRovers(noStore));
+  app.use(notForRovers(cookieParser()));
+  app.use(notForRovers(json({ limit: '1mb' })));
   app.useGlobalFilters(new ProblemFilter());
   app.useGlobalPipes(
     new StandardSchemaValidationPipe({
@@ -23,6 +74,8 @@ export function configureApplication(app: NestExpressApplication): void {
         }),
     }),
   );
+  describeApi(app);
+  serveDashboard(app);
   app.enableShutdownHooks();
 }
 
@@ -31,6 +84,7 @@ export async function createApplication(environment: Environment): Promise<NestE
     bodyParser: false,
     bufferLogs: true,
   });
+  app.useLogger(app.get(Logger));
   configureApplication(app);
   return app;
 }

@@ -9,7 +9,6 @@ export const instantMs = z.number().int();
 export const instantText = z.iso.datetime({ offset: true });
 export const shortText = (what: string, max = 80) =>
   z.string().trim().min(1, `Write ${what}`).max(max, `At most ${max} characters`);
-export const optionalText = (max = 400) =>
-  z.string().trim().max(max, `At most ${max} characters`).nullable();
+export const optionalText = (max = 400) => z.string().trim().max(max, `At most ${max} characters`).nullable();
 export const latitude = z.number().min(-90, 'Between -90 and 90').max(90, 'Between -90 and 90');
 export const longitude = z.number().min(-180, 'Between -180 and 180').max(180, 'Between -180 and 180');

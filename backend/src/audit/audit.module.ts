@@ -1,6 +1,7 @@
 import { Global, Module } from '@nestjs/common';
+import { AuditController } from './audit.controller.js';
 import { AuditService } from './audit.service.js';
 
 @Global()
-@Module({ providers: [AuditService], exports: [AuditService] })
+@Module({ controllers: [AuditController], providers: [AuditService], exports: [AuditService] })
 export class AuditModule {}

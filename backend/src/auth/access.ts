@@ -17,7 +17,8 @@ export interface Viewer {
 export const ACCESS = 'hubtack:access';
 export type Access = readonly ViewerRole[] | 'anyone' | 'roverKey' | 'metricsToken';
 
-const access = (value: Access) => applyDecorators(SetMetadata(ACCESS, value), ApiExtension('x-access', value));
+const access = (value: Access) =>
+  applyDecorators(SetMetadata(ACCESS, value), ApiExtension('x-access', value));
 
 /** Every route says who may. A route that says nothing is refused to everybody. A manager may do everything. */
 export const AllowRoles = (...roles: ViewerRole[]) => access(['manager', ...roles]);

@@ -24,7 +24,10 @@ export const crewBody = z.object({
   pattern: z
     .array(shiftPatternDay)
     .max(7)
-    .refine((days) => new Set(days.map((day) => day.weekday)).size === days.length, 'One line for each weekday'),
+    .refine(
+      (days) => new Set(days.map((day) => day.weekday)).size === days.length,
+      'One line for each weekday',
+    ),
 });
 export type CrewBody = z.infer<typeof crewBody>;
 

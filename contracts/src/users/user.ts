@@ -29,3 +29,7 @@ export const changeUserBody = z
 export type ChangeUserBody = z.infer<typeof changeUserBody>;
 
 export const userList = z.array(user);
+
+/** When no mail could be sent, the manager gets the link to hand over; else it is null. */
+export const invitedUser = z.object({ user, link: z.string().nullable() });
+export type InvitedUser = z.infer<typeof invitedUser>;

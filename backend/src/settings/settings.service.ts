@@ -1,0 +1,47 @@
+import { Inject, Injectable } from '@nestjs/common';
+import type { Settings } from '@hubtack/contracts/settings/settings.js';
+import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
+import { firmSettings } from '@hubtack/drizzle/schema/firm-settings.js';
+import { AuditService } from '../audit/audit.service.js';
+import type { Viewer } from '../auth/access.js';
+import { Changes } from '../common/changes.js';
+import { DATABASE } from '../database/database.module.js';
+
+const ONLY_ROW = 1;
+/** Until a manager has said otherwise. */
+const defaults: Settings = {
+  firmName: 'Our firm',
+  timeZone: 'UTC',
+  units: 'metric',
+  currency: 'AUD',
+  keepPositionsOffShift: false,
+};
+
+@Injectable()
+export class SettingsService {
+  constructor(
+    @Inject(DATABASE) private readonly database: HubtackDatabase,
+    private readonly audit: AuditService,
+    private readonly changes: Changes,
+  ) {}
+
+  get(): Settings {
+    const row = this.database.select().from(firmSettings).get();
+    if (!row) return defaults;
+    const { id: _id, ...settings } = row;
+    return settings;
+  }
+
+  change(viewer: Viewer, settings: Settings): Settings {
+    this.database.transaction((tx) => {
+      const before = this.get();
+      tx.insert(firmSettings)
+        .values({ id: ONLY_ROW, ...settings })
+        .onConflictDoUpdate({ target: firmSettings.id, set: settings })
+        .run();
+      this.audit.record(viewer, { action: 'settings.changed', subject: 'Settings', before, after: settings });
+    });
+    this.changes.announce({ kind: 'firm' });
+    return settings;
+  }
+}
