@@ -1,0 +1,59 @@
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+import { startMailbox } from '../mailbox/mailbox.js';
+import { Processes, freePort, waitUntilReady } from './processes.js';
+
+const root = fileURLToPath(new URL('../../../', import.meta.url));
+const folder = join(root, 'var/demo');
+const wantedPort = Number(process.env.PORT ?? 3000);
+const port = await freePort(wantedPort);
+const tcpPort = await freePort(10_110);
+const url = `http://127.0.0.1:${port}`;
+
+const processes = new Processes();
+const mailbox = await startMailbox({ pagePort: await freePort(1080), folder: join(folder, 'mailbox') });
+const stop = async () => {
+  await processes.stop();
+  await mailbox.close();
+  process.exit(0);
+};
+for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => void stop());
+
+processes.start(
+  'The server',
+  process.execPath,
+  ['--enable-source-maps', join(root, 'backend/dist/main.js')],
+  {
+    DEMO: 'on',
+    NODE_ENV: 'production',
+    PORT: String(port),
+    NMEA_TCP_PORT: String(tcpPort),
+    DATABASE_FILE: join(folder, 'hubtack.sqlite'),
+    UPLOADS_DIR: join(folder, 'uploads'),
+    SMTP_URL: mailbox.smtpUrl,
+    MAIL_FROM: 'Pennywort Surveys <hubtack@pennywort.example>',
+    CASTER_PRIVATE_ADDRESSES: 'allow',
+    LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
+  },
+);
+await waitUntilReady(url, 60);
+const fleet = fileURLToPath(new URL('../fleet/main.js', import.meta.url));
+processes.start('The fleet', process.execPath, [
+  fleet,
+  ...['--scenario', 'demo', '--url', url, '--keys', join(folder, 'demo-rover-keys.json')],
+]);
+
+const accounts = ['manager', 'dispatcher', 'technician', 'chief.alder', 'chief.banksia', 'chief.dogwood'];
+console.log(`
+Hubtack runs with the demo firm Pennywort Surveys${port === wantedPort ? '' : ` (port ${wantedPort} was taken)`}:
+
+  ${url}
+
+Sign in as one of
+${accounts.map((name) => `  ${name}@pennywort.example`).join('\n')}
+with the password  tack-in-the-hub
+
+Mails: ${mailbox.pageUrl}    Sentences over TCP: port ${tcpPort}
+Within a minute Banksia's corrections stop, Dogwood goes under trees, Echidna falls silent; Fernwren never had a fix.
+Ctrl-C stops everything. The demo's data is in var/demo; delete that folder to begin anew.
+`);

@@ -1,0 +1,78 @@
+import { existsSync } from 'node:fs';
+import { z } from 'zod';
+import { readOptions } from '../cli/options.js';
+import { scenarioNames, scenarios } from '../scenarios/scenarios.js';
+import { runFleet } from './fleet.js';
+import { keysFromFile, makeRovers } from './rover-keys.js';
+import { HttpLink, TcpLink } from './rover-link.js';
+
+const usage = `Simulated crews that send real sentences to a running server.
+
+  npm run fleet -- [--crews N] [--scenario NAME] [--seed N] [--speed X] [--via http|tcp] [--duration S]
+                   [--url http://127.0.0.1:3000] [--tcp 127.0.0.1:10110]
+                   [--keys FILE | --email ADDRESS --password WORDS]
+
+Scenarios: ${scenarioNames.join(', ')}
+Keys come from a demo's demo-rover-keys.json, or are made by signing in as a technician or manager.`;
+
+const options = readOptions(
+  usage,
+  {
+    crews: { type: 'string' },
+    scenario: { type: 'string' },
+    seed: { type: 'string' },
+    speed: { type: 'string' },
+    via: { type: 'string' },
+    duration: { type: 'string' },
+    url: { type: 'string' },
+    tcp: { type: 'string' },
+    keys: { type: 'string' },
+    email: { type: 'string' },
+    password: { type: 'string' },
+  },
+  z.object({
+    crews: z.coerce.number().int().min(1).max(2000).optional(),
+    scenario: z.enum(scenarioNames).default('demo'),
+    seed: z.coerce.number().int().min(0).default(1),
+    speed: z.coerce.number().positive().max(100).default(1),
+    via: z.enum(['http', 'tcp']).default('http'),
+    duration: z.coerce.number().positive().optional(),
+    url: z.url().default('http://127.0.0.1:3000'),
+    tcp: z
+      .string()
+      .regex(/^[^:]+:\d+$/, 'write HOST:PORT')
+      .default('127.0.0.1:10110'),
+    keys: z.string().default('var/demo/demo-rover-keys.json'),
+    email: z.string().default('manager@pennywort.example'),
+    password: z.string().default('tack-in-the-hub'),
+  }),
+);
+
+const { url, email, password } = options;
+const fromFile = options.crews === undefined && existsSync(options.keys);
+const rovers = fromFile
+  ? keysFromFile(options.keys)
+  : await makeRovers({ url, email, password }, options.crews ?? 6);
+const [host, port] = options.tcp.split(':') as [string, string];
+const stop = new AbortController();
+for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => stop.abort());
+
+console.log(
+  `${rovers.length} rovers, scenario ${options.scenario}, seed ${options.seed}, over ${options.via}`,
+);
+let lastProblem = 0;
+await runFleet({
+  rovers,
+  scenario: scenarios[options.scenario],
+  seed: options.seed,
+  speed: options.speed,
+  durationSeconds: options.duration ?? null,
+  link: ({ key }) => (options.via === 'http' ? new HttpLink(url, key) : new TcpLink(host, Number(port), key)),
+  signal: stop.signal,
+  onProblem: (label, error) => {
+    // One line a second is enough to see that the server is away.
+    if (Date.now() - lastProblem < 1000) return;
+    lastProblem = Date.now();
+    console.error(`${label}: ${error.message}`);
+  },
+});

@@ -1,0 +1,51 @@
+import { DAY_MS, type Sentence } from '@hubtack/contracts/nmea/sentence.js';
+
+/** Lines that go to the server together. */
+export interface Post {
+  /** UTC date of its first dated sentence, YYYY-MM-DD; null when nobody knows. */
+  date: string | null;
+  body: Uint8Array;
+}
+
+const MOST_LINES = 500;
+const MOST_BYTES = 200_000;
+
+/** Gathers lines into posts. A post is cut before the first GGA of an instant, so that what belongs together stays so. */
+export class PostBuilder {
+  private lines: Uint8Array[] = [];
+  private bytes = 0;
+  private firstAt: number | null = null;
+
+  get isEmpty(): boolean {
+    return this.lines.length === 0;
+  }
+
+  /** Adds a line; answers a finished post when the line begins the next one. `at`: ms UTC of the line, if known. */
+  add(line: Uint8Array, sentences: readonly Sentence[], at: number | null): Post | null {
+    const begins = sentences.some(({ type }) => type === 'gga');
+    const isFull = this.lines.length >= MOST_LINES || this.bytes >= MOST_BYTES;
+    const finished = isFull && (begins || this.lines.length >= 2 * MOST_LINES) ? this.take() : null;
+    this.lines.push(line);
+    this.bytes += line.length;
+    if (sentences.length > 0) this.firstAt ??= at;
+    return finished;
+  }
+
+  take(): Post | null {
+    if (this.isEmpty) return null;
+    const body = new Uint8Array(this.bytes);
+    let offset = 0;
+    for (const line of this.lines) {
+      body.set(line, offset);
+      offset += line.length;
+    }
+    const date =
+      this.firstAt === null
+        ? null
+        : new Date(Math.floor(this.firstAt / DAY_MS) * DAY_MS).toISOString().slice(0, 10);
+    this.lines = [];
+    this.bytes = 0;
+    this.firstAt = null;
+    return { date, body };
+  }
+}
