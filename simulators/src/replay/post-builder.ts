@@ -14,20 +14,24 @@ const MOST_BYTES = 200_000;
 export class PostBuilder {
   private lines: Uint8Array[] = [];
   private bytes = 0;
-  private firstAt: number | null = null;
+  private firstTimeOfDayMs: number | null = null;
+  private newest: number | null = null;
 
   get isEmpty(): boolean {
     return this.lines.length === 0;
   }
 
-  /** Adds a line; answers a finished post when the line begins the next one. `at`: ms UTC of the line, if known. */
-  add(line: Uint8Array, sentences: readonly Sentence[], at: number | null): Post | null {
+  /** Adds a line; answers a finished post when the line begins the next one. `newest`: ms UTC the log has got to, if known. */
+  add(line: Uint8Array, sentences: readonly Sentence[], newest: number | null): Post | null {
     const begins = sentences.some(({ type }) => type === 'gga');
     const isFull = this.lines.length >= MOST_LINES || this.bytes >= MOST_BYTES;
     const finished = isFull && (begins || this.lines.length >= 2 * MOST_LINES) ? this.take() : null;
     this.lines.push(line);
     this.bytes += line.length;
-    if (sentences.length > 0) this.firstAt ??= at;
+    this.newest = newest ?? this.newest;
+    for (const sentence of sentences) {
+      if ('timeOfDayMs' in sentence) this.firstTimeOfDayMs ??= sentence.timeOfDayMs;
+    }
     return finished;
   }
 
@@ -39,13 +43,18 @@ export class PostBuilder {
       body.set(line, offset);
       offset += line.length;
     }
-    const date =
-      this.firstAt === null
-        ? null
-        : new Date(Math.floor(this.firstAt / DAY_MS) * DAY_MS).toISOString().slice(0, 10);
+    const date = this.firstDate();
     this.lines = [];
     this.bytes = 0;
-    this.firstAt = null;
+    this.firstTimeOfDayMs = null;
+    this.newest = null;
     return { date, body };
+  }
+
+  /** Counted back from the newest sentence: an RMC or ZDA within the post may be what first told the date. */
+  private firstDate(): string | null {
+    if (this.firstTimeOfDayMs === null || this.newest === null) return null;
+    const day = Math.round((this.newest - this.firstTimeOfDayMs) / DAY_MS);
+    return new Date(day * DAY_MS).toISOString().slice(0, 10);
   }
 }

@@ -9,6 +9,8 @@ const LIVE_POST_MS = 400;
 /** Pauses in a log are kept up to this long, so that a replay of a day with a night in it ends. */
 const LONGEST_PAUSE_MS = 600_000;
 
+const LONG_GAP_MS = 3_600_000;
+
 export interface ReplayOptions {
   source: Source;
   /** Days since 1970 of the first sentence of a stored log; null when only its own sentences or the clock say. */
@@ -41,13 +43,13 @@ export async function replay(options: ReplayOptions): Promise<void> {
   const takeLine = async (line: Uint8Array) => {
     const sentences = sentencesIn(line);
     clock.take(sentences, source.live ? Date.now() : null);
-    if (keepsTime && clock.now !== null) {
-      const step = previous === null ? 0 : Math.min(clock.now - previous, LONGEST_PAUSE_MS);
-      if (step > 0) {
-        flush();
-        await delay(step / speed);
-      }
-      previous = clock.now;
+    const step = previous === null || clock.now === null ? 0 : clock.now - previous;
+    previous = clock.now ?? previous;
+    // A post states one date and its sentences go on from it, so it never spans a long gap.
+    if (Math.abs(step) > LONG_GAP_MS) flush();
+    if (keepsTime && step > 0) {
+      flush();
+      await delay(Math.min(step, LONGEST_PAUSE_MS) / speed);
     }
     handOn(builder.add(line, sentences, clock.now));
     if (source.live && timer === null) timer = setTimeout(flush, LIVE_POST_MS);
