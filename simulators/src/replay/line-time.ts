@@ -24,6 +24,8 @@ const HALF_DAY_MS = DAY_MS / 2;
 export class LogClock {
   /** ms UTC of the newest sentence; null before any, or while no date is known. */
   now: number | null = null;
+  /** The newest line has a date other than the one counted on: what came before was dated wrongly, or long ago. */
+  redated = false;
   private day: number | null;
   private lastTimeOfDay: number | null = null;
 
@@ -37,12 +39,15 @@ export class LogClock {
 
   /** Takes a line; `readAt` is when it was read from a live receiver, null for a stored log. */
   take(sentences: readonly Sentence[], readAt: number | null): void {
+    this.redated = false;
     for (const sentence of sentences) {
       if (sentence.type !== 'gga' && sentence.type !== 'date') continue;
       const { timeOfDayMs } = sentence;
       if (timeOfDayMs === null) continue;
-      if (sentence.type === 'date' && sentence.day !== null && !this.isStated) this.day = sentence.day;
-      else if (this.day === null && readAt !== null) this.day = Math.round((readAt - timeOfDayMs) / DAY_MS);
+      if (sentence.type === 'date' && sentence.day !== null && !this.isStated) {
+        this.redated = this.day !== null && this.day !== sentence.day;
+        this.day = sentence.day;
+      } else if (this.day === null && readAt !== null) this.day = Math.round((readAt - timeOfDayMs) / DAY_MS);
       else if (this.day !== null && this.lastTimeOfDay !== null) {
         const step = timeOfDayMs - this.lastTimeOfDay;
         if (step < -HALF_DAY_MS) this.day++;

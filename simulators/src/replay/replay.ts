@@ -46,7 +46,7 @@ export async function replay(options: ReplayOptions): Promise<void> {
     const step = previous === null || clock.now === null ? 0 : clock.now - previous;
     previous = clock.now ?? previous;
     // A post states one date and its sentences go on from it, so it never spans a long gap.
-    if (Math.abs(step) > LONG_GAP_MS) flush();
+    if (step > LONG_GAP_MS && !clock.redated) flush();
     if (keepsTime && step > 0) {
       flush();
       await delay(Math.min(step, LONGEST_PAUSE_MS) / speed);

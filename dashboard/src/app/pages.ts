@@ -1,0 +1,22 @@
+import type { ViewerRole } from '@hubtack/contracts/auth/role.js';
+
+interface PageEntry {
+  path: string;
+  name: string;
+  /** A manager sees every page. */
+  roles: readonly ViewerRole[];
+}
+
+const pages: readonly PageEntry[] = [
+  { path: '/', name: 'Board', roles: ['dispatcher', 'technician', 'crewChief'] },
+  { path: '/crews', name: 'Crews', roles: ['dispatcher', 'technician'] },
+  { path: '/rovers', name: 'Rovers', roles: ['dispatcher', 'technician'] },
+  { path: '/corrections', name: 'Corrections', roles: ['dispatcher', 'technician'] },
+  { path: '/sites', name: 'Sites', roles: ['dispatcher', 'technician'] },
+  { path: '/sentence-reader', name: 'Sentence reader', roles: ['technician', 'dispatcher'] },
+  { path: '/users', name: 'Users', roles: [] },
+  { path: '/settings', name: 'Settings', roles: [] },
+];
+
+export const pagesFor = (role: ViewerRole): readonly PageEntry[] =>
+  pages.filter((page) => role === 'manager' || page.roles.includes(role));

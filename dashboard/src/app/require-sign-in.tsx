@@ -1,0 +1,17 @@
+import { useQuery } from '@tanstack/react-query';
+import type { ReactNode } from 'react';
+import { Navigate, useLocation } from 'react-router-dom';
+import { Failed, Loading } from '../components/query-states';
+import { LiveProvider } from '../live/live-context';
+import { meQuery } from '../lib/session';
+
+/** Pages behind the sign-in. Who has none is asked for one, and comes back to where they were. */
+export function RequireSignIn({ children }: { children: ReactNode }) {
+  const { data: me, error, isPending, refetch } = useQuery(meQuery);
+  const location = useLocation();
+  if (isPending) return <Loading what="your sign-in" />;
+  if (error) return <Failed error={error} retry={() => void refetch()} />;
+  if (!me) return <Navigate to="/sign-in" replace state={{ from: location.pathname }} />;
+  if (me.role === 'display' && location.pathname !== '/wall') return <Navigate to="/wall" replace />;
+  return <LiveProvider>{children}</LiveProvider>;
+}

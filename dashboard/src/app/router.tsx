@@ -1,0 +1,44 @@
+import { lazy, Suspense, type ComponentType } from 'react';
+import { createBrowserRouter, Navigate } from 'react-router-dom';
+import { Loading } from '../components/query-states';
+import { RequireSignIn } from './require-sign-in';
+import { Shell } from './shell';
+
+/** Each page is a chunk of its own, read when somebody goes there. */
+const page = (load: () => Promise<{ default: ComponentType }>) => {
+  const Page = lazy(load);
+  return (
+    <Suspense fallback={<Loading what="the page" />}>
+      <Page />
+    </Suspense>
+  );
+};
+
+export const router = createBrowserRouter([
+  { path: '/sign-in', element: page(() => import('../features/sign-in/sign-in-page')) },
+  { path: '/forgot', element: page(() => import('../features/sign-in/forgot-page')) },
+  { path: '/link/:token', element: page(() => import('../features/sign-in/link-page')) },
+  { path: '/wall', element: page(() => import('../features/board/wall-page')) },
+  {
+    element: (
+      <RequireSignIn>
+        <Shell />
+      </RequireSignIn>
+    ),
+    children: [
+      { path: '/', element: page(() => import('../features/board/board-page')) },
+      { path: '/crews', element: page(() => import('../features/crews/crews-page')) },
+      { path: '/sites', element: page(() => import('../features/sites/sites-page')) },
+      { path: '/rovers', element: page(() => import('../features/rovers/rovers-page')) },
+      { path: '/rovers/:id', element: page(() => import('../features/rovers/rover-page')) },
+      { path: '/corrections', element: page(() => import('../features/corrections/corrections-page')) },
+      {
+        path: '/sentence-reader',
+        element: page(() => import('../features/sentence-reader/sentence-reader-page')),
+      },
+      { path: '/users', element: page(() => import('../features/users/users-page')) },
+      { path: '/settings', element: page(() => import('../features/settings/settings-page')) },
+    ],
+  },
+  { path: '*', element: <Navigate to="/" replace /> },
+]);

@@ -1,0 +1,91 @@
+import { Button } from '@fluentui/react-components';
+import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
+import { useEffect, useRef, type ReactNode } from 'react';
+import { Link } from 'react-router-dom';
+import { SpanRibbon } from '../../components/span-ribbon';
+import { StateGlyph } from '../../components/state-glyph';
+import { onShiftMs, stateNow, totalsNow } from '../../live/lane-figures';
+import { useLane, useServerNow } from '../../live/use-lanes';
+import { age, clockTimeSeconds, distance, duration, utc } from '../../lib/format';
+import { percent } from '../../lib/percent';
+import { useMe } from '../../lib/session';
+import EpochCharts from './epoch-charts';
+import './lane-panel.css';
+
+const HOUR_MS = 3_600_000;
+
+const Figure = ({ name, children, title }: { name: string; children: ReactNode; title?: string }) => (
+  <div>
+    <dt>{name}</dt>
+    <dd title={title}>{children}</dd>
+  </div>
+);
+
+/** Everything about one lane, beside the list; over it on a phone. */
+export default function LanePanel({ id, onClose }: { id: number; onClose: () => void }) {
+  const lane = useLane(id);
+  const now = useServerNow();
+  const { timeZone, units, role } = useMe();
+  const heading = useRef<HTMLHeadingElement>(null);
+  useEffect(() => heading.current?.focus(), [id]);
+  if (!lane) return null;
+  const { state, since } = stateNow(lane, now);
+  const totals = totalsNow(lane, now);
+  const isHeard = state !== 'silent';
+  const to = Math.ceil(now / 5000) * 5000;
+  return (
+    <aside className="panel" aria-label={`Lane of ${lane.crewName ?? lane.roverLabel}`}>
+      <header>
+        <StateGlyph state={state} size={40} />
+        <div>
+          <h2 ref={heading} tabIndex={-1}>
+            {lane.crewName ?? 'No crew'} <small>{lane.roverLabel}</small>
+          </h2>
+          <p>
+            <strong style={{ color: `var(--${state}-text)` }}>{fixStateWords[state]}</strong>{' '}
+            {since === null ? 'never heard' : `for ${duration(now - since)}`}
+          </p>
+        </div>
+        <Button appearance="subtle" onClick={onClose} aria-label="Close the panel">
+          Close
+        </Button>
+      </header>
+      <SpanRibbon
+        spans={lane.ribbon}
+        pauses={lane.pauses}
+        from={to - HOUR_MS}
+        to={to}
+        zone={timeZone}
+        label={`Last hour of ${lane.crewName ?? lane.roverLabel}`}
+      />
+      <dl className="panel-figures">
+        <Figure name="Satellites">{(isHeard ? lane.satellites : null) ?? '–'}</Figure>
+        <Figure name="Age">{isHeard && lane.ageMs !== null ? age(lane.ageMs) : '–'}</Figure>
+        <Figure name="HDOP">{isHeard && lane.hdop !== null ? lane.hdop.toFixed(1) : '–'}</Figure>
+        <Figure name="Station">
+          {lane.stationId === null ? '–' : String(lane.stationId).padStart(4, '0')}
+        </Figure>
+        <Figure name="Base">{lane.mountPoint ?? '–'}</Figure>
+        <Figure name="To the base">
+          {lane.baseDistanceM === null ? 'not known' : distance(lane.baseDistanceM, units)}
+        </Figure>
+        <Figure name="Last heard" {...(lane.lastEpochAt === null ? {} : { title: utc(lane.lastEpochAt) })}>
+          {lane.lastEpochAt === null ? 'never' : clockTimeSeconds(lane.lastEpochAt, timeZone)}
+        </Figure>
+        <Figure name="Fix uptime today">{percent(totals.fixedMs, onShiftMs(totals))}</Figure>
+        <Figure name="On shift today">{duration(onShiftMs(totals))}</Figure>
+        <Figure name="Without a fix today">{duration(onShiftMs(totals) - totals.fixedMs)}</Figure>
+        <Figure name="Site">{lane.siteName ?? '–'}</Figure>
+        <Figure name="Crew’s telephone">
+          {lane.crewPhone ? (
+            <a href={`tel:${lane.crewPhone.replace(/[^+\d]/g, '')}`}>{lane.crewPhone}</a>
+          ) : (
+            '–'
+          )}
+        </Figure>
+      </dl>
+      <EpochCharts roverId={id} zone={timeZone} />
+      {role !== 'crewChief' && <Link to={`/rovers/${id}`}>Rover, keys and assignments</Link>}
+    </aside>
+  );
+}
