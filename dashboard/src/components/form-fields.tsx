@@ -1,6 +1,6 @@
 import { Field, Input, Select, Textarea, type InputProps } from '@fluentui/react-components';
-
-import { get, useFormContext } from 'react-hook-form';
+import { useState } from 'react';
+import { useController } from 'react-hook-form';
 
 interface FieldProps {
   name: string;
@@ -9,20 +9,44 @@ interface FieldProps {
   required?: boolean;
 }
 
-const emptyIsNull = (value: unknown): unknown =>
-  typeof value === 'string' && value.trim() === '' ? null : value;
-/** Keeps what cannot be a number as it was typed, so that the form can say so and nothing is lost. */
-const asNumber = (value: unknown): unknown => {
-  const kept = emptyIsNull(value);
-  if (typeof kept !== 'string') return kept;
-  const number = Number(kept.replace(',', '.'));
-  return Number.isNaN(number) ? kept : number;
+const emptyIsNull = (text: string): string | null => (text.trim() === '' ? null : text);
+/** What cannot be a number stays as it was typed, so that the form can say so and nothing is lost. */
+const asNumber = (text: string): number | string | null => {
+  const kept = emptyIsNull(text);
+  const number = Number(kept?.replace(',', '.'));
+  return kept === null || Number.isNaN(number) ? kept : number;
 };
+const readers = {
+  text: (text: string) => text,
+  optionalText: emptyIsNull,
+  number: asNumber,
+  flag: (text: string) => text === 'true',
+};
+type Reader = keyof typeof readers;
 
-function useFieldError(name: string): { validationMessage?: string; validationState?: 'error' } {
-  const { formState } = useFormContext();
-  const error = get(formState.errors, name) as { message?: string } | undefined;
-  return error ? { validationMessage: error.message ?? 'Not right', validationState: 'error' } : {};
+const textOf = (value: unknown): string =>
+  value === null || value === undefined ? '' : String(value as string | number | boolean);
+
+/** A field of the form around it: what is shown is what was typed, what the form holds is what that stands for. */
+function useFormField(name: string, reader: Reader) {
+  const { field, fieldState } = useController({ name });
+  const [text, setText] = useState(() => textOf(field.value));
+  const { error } = fieldState;
+  return {
+    input: {
+      name,
+      value: text,
+      onBlur: field.onBlur,
+      onChange: (_: unknown, { value }: { value: string }) => {
+        setText(value);
+        field.onChange(readers[reader](value));
+      },
+    },
+    ref: field.ref,
+    state: error
+      ? ({ validationMessage: error.message ?? 'Not right', validationState: 'error' } as const)
+      : {},
+  };
 }
 
 /** A text field that says what is wrong beside itself. */
@@ -31,35 +55,38 @@ export function TextField({
   label,
   hint,
   required,
-  ...input
-}: FieldProps & Omit<InputProps, 'name' | 'value'>) {
-  const { register } = useFormContext();
-  const { ref, ...rest } = register(name, { setValueAs: required ? undefined : emptyIsNull });
+  ...props
+}: FieldProps & Omit<InputProps, 'name' | 'value' | 'required'>) {
+  const { input, ref, state } = useFormField(name, required ? 'text' : 'optionalText');
   return (
-    <Field label={label} hint={hint} required={required} {...useFieldError(name)}>
-      <Input {...input} {...rest} input={{ ref }} />
+    <Field label={label} hint={hint} required={required} {...state}>
+      <Input {...props} {...input} input={{ ref }} />
     </Field>
   );
 }
 
 export function NumberField({ name, label, hint, required }: FieldProps) {
-  const { register } = useFormContext();
-  const { ref, ...rest } = register(name, { setValueAs: asNumber });
+  const { input, ref, state } = useFormField(name, 'number');
   return (
-    <Field label={label} hint={hint} required={required} {...useFieldError(name)}>
-      <Input inputMode="decimal" {...rest} input={{ ref }} />
+    <Field label={label} hint={hint} required={required} {...state}>
+      <Input inputMode="decimal" {...input} input={{ ref }} />
     </Field>
   );
 }
 
 export function NoteField({ name, label, hint }: FieldProps) {
-  const { register } = useFormContext();
-  const { ref, ...rest } = register(name, { setValueAs: emptyIsNull });
+  const { input, ref, state } = useFormField(name, 'optionalText');
   return (
-    <Field label={label} hint={hint} {...useFieldError(name)}>
-      <Textarea {...rest} textarea={{ ref }} />
+    <Field label={label} hint={hint} {...state}>
+      <Textarea {...input} textarea={{ ref }} />
     </Field>
   );
+}
+
+/** A clock time in a line of its own kind, named for people who do not see its place. */
+export function TimeInput({ name, label }: { name: string; label: string }) {
+  const { input, ref } = useFormField(name, 'text');
+  return <Input type="time" aria-label={label} {...input} input={{ ref }} />;
 }
 
 interface ChoiceFieldProps extends FieldProps {
@@ -67,28 +94,29 @@ interface ChoiceFieldProps extends FieldProps {
   /** What an empty choice is called; without it something must be chosen. */
   none?: string;
   /** What the chosen text stands for. */
-  as?: 'text' | 'number' | 'flag';
+  as?: Reader;
 }
 
-const readers = {
-  text: emptyIsNull,
-  number: asNumber,
-  flag: (value: unknown) => value === true || value === 'true',
-};
-
-export function ChoiceField({ name, label, hint, options, none, as = 'text', required }: ChoiceFieldProps) {
-  const { register } = useFormContext();
-  const { ref, ...rest } = register(name, { setValueAs: readers[as] });
+/** A choice without a label of its own beside it. */
+export function ChoiceInput({ name, label, options, none, as = 'optionalText' }: ChoiceFieldProps) {
+  const { input, ref } = useFormField(name, as);
   return (
-    <Field label={label} hint={hint} required={required} {...useFieldError(name)}>
-      <Select {...rest} ref={ref}>
-        {none !== undefined && <option value="">{none}</option>}
-        {options.map(({ value, label: words }) => (
-          <option key={value} value={value}>
-            {words}
-          </option>
-        ))}
-      </Select>
+    <Select aria-label={label} {...input} ref={ref}>
+      {none !== undefined && <option value="">{none}</option>}
+      {options.map(({ value, label: words }) => (
+        <option key={value} value={value}>
+          {words}
+        </option>
+      ))}
+    </Select>
+  );
+}
+
+export function ChoiceField({ hint, required, ...choice }: ChoiceFieldProps) {
+  const { state } = useFormField(choice.name, choice.as ?? 'optionalText');
+  return (
+    <Field label={choice.label} hint={hint} required={required} {...state}>
+      <ChoiceInput {...choice} />
     </Field>
   );
 }

@@ -46,7 +46,15 @@ function ShareChart({ rows }: { rows: ShareRow[] }) {
           margin={{ top: 4, right: 16, bottom: 0, left: 0 }}
         >
           <CartesianGrid horizontal={false} stroke="var(--rule)" />
-          <XAxis type="number" domain={[0, 100]} unit=" %" stroke="var(--ink-soft)" fontSize={12} />
+          <XAxis
+            type="number"
+            domain={[0, 100]}
+            ticks={[0, 25, 50, 75, 100]}
+            allowDataOverflow
+            unit=" %"
+            stroke="var(--ink-soft)"
+            fontSize={12}
+          />
           <YAxis type="category" dataKey="name" width={110} stroke="var(--ink-soft)" fontSize={13} />
           <Tooltip
             cursor={{ fill: 'var(--rule)', opacity: 0.4 }}

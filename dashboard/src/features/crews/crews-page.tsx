@@ -12,7 +12,8 @@ import { crewsQuery, useAddCrew, useChangeCrew } from '../../lib/crews';
 import { useMe } from '../../lib/session';
 import { settingsQuery } from '../../lib/settings';
 import { sitesQuery } from '../../lib/sites';
-import { PatternFields, weekdays } from './pattern-fields';
+import { PatternFields } from './pattern-fields';
+import { weekdays } from './weekdays';
 
 function Fields() {
   const { data: sites = [] } = useQuery(sitesQuery);
