@@ -3,7 +3,8 @@ import { defineConfig } from 'vitest/config';
 // Workspaces are read from their sources, so a test never runs against a stale build.
 const source = {
   resolve: { conditions: ['hubtack-source'] },
-  ssr: { resolve: { conditions: ['hubtack-source', 'node', 'import', 'default'] } },
+  // Vitest hands these on to Node for packages too, so nothing that would turn a require into an import.
+  ssr: { resolve: { conditions: ['hubtack-source', 'node'] } },
 };
 
 export default defineConfig({
