@@ -1,0 +1,54 @@
+import { fork, type ChildProcess } from 'node:child_process';
+import { mkdtempSync, readFileSync, rmSync } from 'node:fs';
+import { tmpdir } from 'node:os';
+import { join } from 'node:path';
+import { fileURLToPath } from 'node:url';
+
+export const makeFolder = (): string => mkdtempSync(join(tmpdir(), 'hubtack-bench-'));
+export const removeFolder = (folder: string): void => rmSync(folder, { recursive: true, force: true });
+
+/** A program under measurement, in a process of its own. */
+export class Child {
+  private constructor(
+    private readonly process: ChildProcess,
+    readonly port: number,
+  ) {}
+
+  /** Starts a program of this folder, which tells its port. */
+  static async start(program: string, args: string[]): Promise<Child> {
+    const file = fileURLToPath(new URL(program, import.meta.url));
+    const process = fork(file, args, { stdio: ['ignore', 'ignore', 'inherit', 'ipc'] });
+    const { port } = await Child.answer<{ port: number }>(process);
+    return new Child(process, port);
+  }
+
+  ask<T>(message: object): Promise<T> {
+    const answer = Child.answer<T>(this.process);
+    this.process.send(message);
+    return answer;
+  }
+
+  /** Bytes that the process has caused to be written to disk so far. */
+  bytesWritten(): number {
+    return bytesWrittenBy(this.process.pid!);
+  }
+
+  async stop(): Promise<void> {
+    const ended = new Promise((resolve) => {
+      this.process.once('exit', resolve);
+    });
+    this.process.kill('SIGKILL');
+    await ended;
+  }
+
+  private static answer<T>(process: ChildProcess): Promise<T> {
+    return new Promise((resolve, reject) => {
+      process.once('message', (message) => resolve(message as T));
+      process.once('error', reject);
+    });
+  }
+}
+
+export function bytesWrittenBy(pid: number): number {
+  return Number(/^write_bytes: (\d+)$/m.exec(readFileSync(`/proc/${pid}/io`, 'utf8'))![1]);
+}

@@ -1,0 +1,30 @@
+import { ingestAnswer, ingestHttp1, ingestHttp60, capacity } from './ingest-http.js';
+import { ingestTcp } from './ingest-tcp.js';
+import { printRow, type Row } from './report.js';
+import { fanOut, freshness, stalled } from './stream.js';
+import { timelineQuery } from './timeline-query.js';
+
+const benches: Record<string, () => Promise<Row[]>> = {
+  'ingest/tcp': ingestTcp,
+  'ingest/http-60': ingestHttp60,
+  'ingest/http-1': ingestHttp1,
+  'ingest/answer': ingestAnswer,
+  'stream/fan-out': fanOut,
+  'stream/freshness': freshness,
+  'stream/stalled': stalled,
+  'timeline/query': timelineQuery,
+  capacity,
+};
+
+const args = process.argv.slice(2);
+const asJson = args.includes('--json');
+const wanted = args.filter((arg) => !arg.startsWith('--'));
+const names = Object.keys(benches).filter(
+  (name) => wanted.length === 0 || wanted.some((word) => name.startsWith(word)),
+);
+if (names.length === 0) {
+  console.error(`There is no such benchmark. There are: ${Object.keys(benches).join(', ')}`);
+  process.exit(2);
+}
+for (const name of names) for (const row of await benches[name]!()) printRow(row, asJson);
+process.exit(0);
