@@ -6,12 +6,14 @@ import { DocumentBuilder, SwaggerModule } from '@nestjs/swagger';
 import cookieParser from 'cookie-parser';
 import { json, type NextFunction, type Request, type RequestHandler, type Response } from 'express';
 import helmet from 'helmet';
-import { Logger } from 'nestjs-pino';
+import { Logger, PinoLogger } from 'nestjs-pino';
+import { pinoHttp, type Options } from 'pino-http';
 import { AppModule } from './app.module.js';
 import { ProblemException } from './common/problem.exception.js';
 import { ProblemFilter } from './common/problem.filter.js';
 import type { Environment } from './config/environment.js';
 import { serveDashboard } from './operate/dashboard-files.js';
+import { loggingOf } from './operate/logging.js';
 
 const pointer = (path: readonly unknown[] | undefined): string =>
   (path ?? []).map((part) => `/${String((part as { key?: unknown } | null)?.key ?? part)}`).join('');
@@ -57,10 +59,12 @@ function describeApi(app: NestExpressApplication): void {
 }
 
 /** Settings that every way of running the application shares: main.ts and the tests. */
-export function configureApplication(app: NestExpressApplication): void {
+export function configureApplication(app: NestExpressApplication, environment: Environment): void {
   app.setGlobalPrefix('api', { exclude: ['health/*path', 'metrics'] });
   app.disable('x-powered-by');
   app.disable('etag');
+  const logging = { ...(loggingOf(environment).pinoHttp as Options), logger: PinoLogger.root };
+  app.use(notForRovers(pinoHttp(logging)));
   app.use(notForRovers(security));
   app.use(notForRovers(noStore));
   app.use(notForRovers(cookieParser()));
@@ -85,6 +89,6 @@ export async function createApplication(environment: Environment): Promise<NestE
     bufferLogs: true,
   });
   app.useLogger(app.get(Logger));
-  configureApplication(app);
+  configureApplication(app, environment);
   return app;
 }

@@ -53,7 +53,7 @@ export async function startServer(environment: Record<string, string> = {}): Pro
     .compile();
   const app = module.createNestApplication<NestExpressApplication>({ bodyParser: false });
   if (parsed.LOG_LEVEL === 'silent') app.useLogger(false);
-  configureApplication(app);
+  configureApplication(app, parsed);
   await app.listen(0, '127.0.0.1');
   const { port } = app.getHttpServer().address() as AddressInfo;
   const url = `http://127.0.0.1:${port}`;

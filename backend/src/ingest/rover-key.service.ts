@@ -6,6 +6,7 @@ import { roverKeys, rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { eq } from 'drizzle-orm';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
+import { ProblemException } from '../common/problem.exception.js';
 import { DATABASE } from '../database/database.module.js';
 
 export interface KnownKey {
@@ -42,6 +43,21 @@ export class RoverKeyService {
     if (!known) return this.revoked.has(keyHash) ? 'revoked' : 'unknown';
     this.used.set(known.keyId, this.clock.now());
     return known;
+  }
+
+  /** The rover that a request's Authorization header speaks for; throws 401 with the reason. */
+  authorise(authorization: string | undefined): number {
+    if (!authorization?.startsWith('Bearer '))
+      throw new ProblemException(
+        401,
+        'roverKeyUnknown',
+        'Send the rover key as "Authorization: Bearer <key>".',
+      );
+    const known = this.find(authorization.slice(7).trim());
+    if (known === 'revoked')
+      throw new ProblemException(401, 'roverKeyRevoked', 'This rover key has been taken back.');
+    if (known === 'unknown') throw new ProblemException(401, 'roverKeyUnknown', 'No rover has this key.');
+    return known.roverId;
   }
 
   /** When a key was last used is good to the half minute: no write for each post. */
