@@ -30,8 +30,6 @@ export class AppModule {
       module: AppModule,
       imports: [
         ConfigModule.of(environment),
-        // First, because routes are tried in this order and rovers ask by the thousand.
-        IngestModule,
         LoggerModule.forRoot(loggingOf(environment)),
         ScheduleModule.forRoot(),
         DatabaseModule,
@@ -48,6 +46,7 @@ export class AppModule {
         RoversModule,
         CorrectionsModule,
         FixesModule,
+        IngestModule,
         BoardModule,
         HealthModule,
         OperateModule,

@@ -4,7 +4,7 @@ import { NestFactory } from '@nestjs/core';
 import type { NestExpressApplication } from '@nestjs/platform-express';
 import { DocumentBuilder, SwaggerModule } from '@nestjs/swagger';
 import cookieParser from 'cookie-parser';
-import { json, type NextFunction, type Request, type RequestHandler, type Response } from 'express';
+import { json, type RequestHandler } from 'express';
 import helmet from 'helmet';
 import { Logger, PinoLogger } from 'nestjs-pino';
 import { pinoHttp, type Options } from 'pino-http';
@@ -17,12 +17,6 @@ import { loggingOf } from './operate/logging.js';
 
 const pointer = (path: readonly unknown[] | undefined): string =>
   (path ?? []).map((part) => `/${String((part as { key?: unknown } | null)?.key ?? part)}`).join('');
-
-/** Rovers post here by the thousand and bring no cookies: nothing that is for browsers stands in front of it. */
-const notForRovers =
-  (handler: RequestHandler): RequestHandler =>
-  (request: Request, response: Response, next: NextFunction) =>
-    request.url.startsWith('/api/ingest/') ? next() : handler(request, response, next);
 
 const security = helmet({
   contentSecurityPolicy: {
@@ -58,17 +52,17 @@ function describeApi(app: NestExpressApplication): void {
   });
 }
 
-/** Settings that every way of running the application shares: main.ts and the tests. */
+/** Settings that every way of running the application shares: main.ts and the tests. Rovers pass all this by: see `roversFirst`. */
 export function configureApplication(app: NestExpressApplication, environment: Environment): void {
   app.setGlobalPrefix('api', { exclude: ['health/*path', 'metrics'] });
   app.disable('x-powered-by');
   app.disable('etag');
   const logging = { ...(loggingOf(environment).pinoHttp as Options), logger: PinoLogger.root };
-  app.use(notForRovers(pinoHttp(logging)));
-  app.use(notForRovers(security));
-  app.use(notForRovers(noStore));
-  app.use(notForRovers(cookieParser()));
-  app.use(notForRovers(json({ limit: '1mb' })));
+  app.use(pinoHttp(logging));
+  app.use(security);
+  app.use(noStore);
+  app.use(cookieParser());
+  app.use(json({ limit: '1mb' }));
   app.useGlobalFilters(new ProblemFilter());
   app.useGlobalPipes(
     new StandardSchemaValidationPipe({

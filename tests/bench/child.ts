@@ -43,8 +43,11 @@ export class Child {
 
   private static answer<T>(process: ChildProcess): Promise<T> {
     return new Promise((resolve, reject) => {
-      process.once('message', (message) => resolve(message as T));
       process.once('error', reject);
+      process.once('message', (message) => {
+        process.off('error', reject);
+        resolve(message as T);
+      });
     });
   }
 }
