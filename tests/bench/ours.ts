@@ -10,7 +10,7 @@ import { roverAssignments, roverKeys, rovers } from '@hubtack/drizzle/schema/rov
 import { spans } from '@hubtack/drizzle/schema/spans.js';
 import { users } from '@hubtack/drizzle/schema/users.js';
 import { Client } from '../harness/client.js';
-import { bytesWrittenBy, makeFolder, removeFolder } from './child.js';
+import { NODE_FLAGS, bytesWrittenBy, makeFolder, removeFolder } from './child.js';
 import { freePorts } from './free-ports.js';
 
 const PASSWORD = 'words for the bench';
@@ -42,7 +42,7 @@ export class Ours {
     const keys = await fill(databaseFile, options);
     const [port, tcpPort] = await freePorts(2);
     const program = fileURLToPath(new URL('../../../backend/dist/main.js', import.meta.url));
-    const process_ = spawn(process.execPath, [program], {
+    const process_ = spawn(process.execPath, [...NODE_FLAGS, program], {
       stdio: ['ignore', 'ignore', 'inherit'],
       env: {
         ...process.env,
