@@ -15,7 +15,10 @@ export default defineConfig({
         ...source,
         test: {
           name: 'unit',
-          include: ['{contracts,backend,simulators,dashboard}/src/**/*.spec.{ts,tsx}', 'drizzle/**/*.spec.ts'],
+          include: [
+            '{contracts,backend,simulators,dashboard}/src/**/*.spec.{ts,tsx}',
+            'drizzle/**/*.spec.ts',
+          ],
           exclude: ['**/dist/**', '**/node_modules/**'],
           testTimeout: 20_000,
         },

@@ -66,7 +66,9 @@ class TcpLoad {
     for (const block of blocks) {
       await Promise.all(
         this.sockets.map((socket) =>
-          socket.write(block) ? null : new Promise((resolve) => socket.once('drain', resolve)),
+          socket.write(block)
+            ? Promise.resolve()
+            : new Promise<void>((resolve) => socket.once('drain', () => resolve())),
         ),
       );
     }

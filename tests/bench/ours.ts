@@ -42,7 +42,7 @@ export class Ours {
     const keys = await fill(databaseFile, options);
     const [port, tcpPort] = await freePorts(2);
     const program = fileURLToPath(new URL('../../../backend/dist/main.js', import.meta.url));
-    const process_ = spawn(process.execPath, [...NODE_FLAGS, program], {
+    const child = spawn(process.execPath, [...NODE_FLAGS, program], {
       stdio: ['ignore', 'ignore', 'inherit'],
       env: {
         ...process.env,
@@ -65,7 +65,7 @@ export class Ours {
     const client = new Client(url);
     const answer = await client.signIn(EMAIL, PASSWORD);
     if (!answer.ok) throw new Error(`the server under measurement does not start: ${await answer.text()}`);
-    return new Ours(url, port!, tcpPort!, keys, databaseFile, client, process_, folder);
+    return new Ours(url, port!, tcpPort!, keys, databaseFile, client, child, folder);
   }
 
   async accepted(): Promise<number> {

@@ -14,6 +14,12 @@ export class MovingClock extends Clock {
     this.frozenAt = at;
   }
 
+  /** Goes on with the machine's own time. */
+  run(): void {
+    this.frozenAt = null;
+    this.offsetMs = 0;
+  }
+
   advance(ms: number): void {
     if (this.frozenAt === null) this.offsetMs += ms;
     else this.frozenAt += ms;

@@ -77,8 +77,7 @@ export class StreamReading {
     });
     const decoder = new TextDecoder();
     try {
-      for await (const chunk of response.body!)
-        parser.feed(decoder.decode(chunk as Uint8Array, { stream: true }));
+      for await (const chunk of response.body!) parser.feed(decoder.decode(chunk, { stream: true }));
     } catch {
       // Closed by the test, or cut by the server: either way it has ended.
     }

@@ -125,7 +125,7 @@ describe('writes from elsewhere', () => {
     [{}, 400],
   ])('%o is answered %d', async (headers, expected) => {
     const client = await signedIn('manager@pennywort.example');
-    const response = await client.call('POST', '/api/crews', {}, headers as Record<string, string>);
+    const response = await client.call('POST', '/api/crews', {}, headers);
     expect(response.status).toBe(expected);
     if (expected === 403) expect(await codeOf(response)).toBe('badOrigin');
   });

@@ -1,9 +1,10 @@
 import { describe, expect, it } from 'vitest';
 import { publishedGga, publishedInvalid, publishedOthers } from '../testing/published-sentences.js';
 import { readText } from '../testing/read-text.js';
-import { DAY_MS, type DateSentence, type GgaSentence, type GstSentence } from './sentence.js';
+import { DAY_MS, type DateSentence, type GgaSentence, type GstSentence, type Sentence } from './sentence.js';
 
-const one = <T>(text: string): T => {
+/** The one sentence in a text, of the kind that the test expects. */
+const one = <T extends Sentence>(text: string): T => {
   const { sentences, faults, noise } = readText(`${text}\r\n`);
   expect({ faults, noise, count: sentences.length }).toEqual({ faults: [], noise: [], count: 1 });
   return sentences[0] as T;
@@ -119,10 +120,8 @@ describe('irregularities a parser meets', () => {
   });
   it('keys on the last three letters, and never on proprietary sentences', () => {
     expect(one<GgaSentence>(checksummed(gga('4').replace('GPGGA', 'QZGGA'))).talker).toBe('QZ');
-    expect(one<{ type: string }>(checksummed('PXGGA,1,2,3,4,5,6,7,8')).type).toBe('other');
-    expect(
-      one<{ type: string }>(checksummed('GNGGK,120000,010120,4807.038,N,01131.000,E,3,08,1,EHT1,M')).type,
-    ).toBe('other');
+    expect(one(checksummed('PXGGA,1,2,3,4,5,6,7,8')).type).toBe('other');
+    expect(one(checksummed('GNGGK,120000,010120,4807.038,N,01131.000,E,3,08,1,EHT1,M')).type).toBe('other');
   });
   it('a date that does not exist is refused, a missing one is unknown', () => {
     expect(rejected('GPRMC,120000,A,4807.038,N,01131.000,E,0,0,310221,,')).toBe('badField');

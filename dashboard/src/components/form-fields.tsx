@@ -25,7 +25,7 @@ const readers = {
 type Reader = keyof typeof readers;
 
 const textOf = (value: unknown): string =>
-  value === null || value === undefined ? '' : String(value as string | number | boolean);
+  value === null || value === undefined ? '' : `${value as string | number | boolean}`;
 
 /** A field of the form around it: what is shown is what was typed, what the form holds is what that stands for. */
 function useFormField(name: string, reader: Reader) {

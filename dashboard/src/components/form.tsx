@@ -18,8 +18,8 @@ interface FormProps<Schema extends z.ZodType<FieldValues, FieldValues>> {
 /** A form by a contract's schema: checks before sending, shows the server's refusals beside their fields, keeps what was typed. */
 export function Form<Schema extends z.ZodType<FieldValues, FieldValues>>(props: FormProps<Schema>) {
   const { schema, defaults, submit, button, children, onCancel } = props;
-  const resolver = zodResolver(schema) as unknown as Resolver<FieldValues>;
-  const form = useForm<FieldValues>({ resolver, defaultValues: defaults as FieldValues });
+  const resolver = zodResolver(schema) as unknown as Resolver;
+  const form = useForm({ resolver, defaultValues: defaults as FieldValues });
   const [problem, setProblem] = useState<string | null>(null);
   const send = form.handleSubmit(async (values) => {
     setProblem(null);

@@ -7,7 +7,8 @@ export function showFieldErrors<Values extends FieldValues>(
   error: Error,
 ): string | null {
   const errors = error instanceof ApiError ? (error.problem?.errors ?? []) : [];
-  const known = errors.filter(({ pointer }) => pointer.slice(1).split('/')[0]! in form.getValues());
+  const fields = Object.keys(form.getValues());
+  const known = errors.filter(({ pointer }) => fields.includes(pointer.split('/')[1] ?? ''));
   for (const { pointer, detail } of known)
     form.setError(pointer.slice(1).replaceAll('/', '.') as Path<Values>, { message: detail });
   return known.length > 0 ? null : error.message;

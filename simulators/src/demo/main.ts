@@ -40,7 +40,12 @@ await waitUntilReady(url, 60);
 const fleet = fileURLToPath(new URL('../fleet/main.js', import.meta.url));
 processes.start('The fleet', process.execPath, [
   fleet,
-  ...['--scenario', 'demo', '--url', url, '--keys', join(folder, 'demo-rover-keys.json')],
+  '--scenario',
+  'demo',
+  '--url',
+  url,
+  '--keys',
+  join(folder, 'demo-rover-keys.json'),
 ]);
 
 const accounts = ['manager', 'dispatcher', 'technician', 'chief.alder', 'chief.banksia', 'chief.dogwood'];

@@ -27,7 +27,8 @@ export async function runFleet(options: FleetOptions): Promise<void> {
     busy: false,
   }));
   const start = Math.ceil(Date.now() / 1000) * 1000;
-  for (let second = 0; durationSeconds === null || second < durationSeconds; second++) {
+  const seconds = durationSeconds ?? Infinity;
+  for (let second = 0; second < seconds; second++) {
     const dueAt = start + (second * 1000) / speed;
     const wait = dueAt - Date.now();
     if (wait > 0) await delay(wait, undefined, signal ? { signal } : {}).catch(() => undefined);

@@ -27,7 +27,9 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
   const now = useServerNow();
   const { timeZone, units, role } = useMe();
   const heading = useRef<HTMLHeadingElement>(null);
-  useEffect(() => heading.current?.focus(), [id]);
+  useEffect(() => {
+    if (heading.current?.dataset.lane === String(id)) heading.current.focus();
+  }, [id]);
   if (!lane) return null;
   const { state, since } = stateNow(lane, now);
   const totals = totalsNow(lane, now);
@@ -38,7 +40,7 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
       <header>
         <StateGlyph state={state} size={40} />
         <div>
-          <h2 ref={heading} tabIndex={-1}>
+          <h2 ref={heading} tabIndex={-1} data-lane={id}>
             {lane.crewName ?? 'No crew'} <small>{lane.roverLabel}</small>
           </h2>
           <p>

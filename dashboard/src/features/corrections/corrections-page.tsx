@@ -23,8 +23,8 @@ import { typingFaults } from './typing-faults';
 /** What looks mistyped, said while it is typed. It does not stop anybody: some names really are like that. */
 function Fields() {
   const { watch } = useFormContext();
-  const [address, port, mountPoint] = watch(['address', 'port', 'mountPoint']) as unknown[];
-  const faults = typingFaults({ address: String(address ?? ''), port, mountPoint: String(mountPoint ?? '') });
+  const [address, port, mountPoint] = watch(['address', 'port', 'mountPoint']) as (string | number | null)[];
+  const faults = typingFaults({ address: `${address ?? ''}`, port, mountPoint: `${mountPoint ?? ''}` });
   const hint = (field: string) =>
     faults
       .filter((fault) => fault.field === field)

@@ -69,7 +69,7 @@ export function RoverKeys({ rover }: { rover: Rover }) {
         <Button
           appearance="primary"
           disabled={rover.retired || issue.isPending}
-          onClick={() => issue.mutate(undefined as never)}
+          onClick={() => issue.mutate()}
         >
           Issue a key
         </Button>

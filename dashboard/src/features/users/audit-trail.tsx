@@ -7,7 +7,7 @@ import { useMe } from '../../lib/session';
 import { auditQuery } from '../../lib/users';
 
 const words = (value: unknown): string =>
-  value === null ? '–' : typeof value === 'object' ? JSON.stringify(value) : String(value);
+  typeof value === 'string' ? value : value === null ? '–' : JSON.stringify(value);
 
 /** What became of what: only the fields that differ. */
 function difference(before: Record<string, unknown> | null, after: Record<string, unknown> | null): string {

@@ -1,0 +1,43 @@
+import { makeTestDatabase } from '@hubtack/drizzle/testing/test-database.js';
+import { afterAll, beforeAll, expect, it } from 'vitest';
+
+// For each index the query that its comment names, asked of SQLite itself.
+const queries: [index: string, sql: string][] = [
+  ['sign_in_sessions_user', 'SELECT id FROM sign_in_sessions WHERE user_id = 1 AND ended_at IS NULL'],
+  ['refresh_tokens_session', "DELETE FROM refresh_tokens WHERE session_id = 'x'"],
+  ['rover_keys_rover', 'SELECT * FROM rover_keys WHERE rover_id = 1 ORDER BY id DESC'],
+  ['rover_assignments_rover', 'SELECT * FROM rover_assignments WHERE rover_id = 1 AND start_at <= 5'],
+  ['rover_assignments_crew', 'SELECT * FROM rover_assignments WHERE crew_id = 1 AND start_at < 5'],
+  ['shifts_crew', 'SELECT * FROM shifts WHERE crew_id = 1 AND start_at < 5'],
+  ['shift_pauses_shift', 'SELECT * FROM shift_pauses WHERE shift_id IN (1, 2)'],
+];
+let test: ReturnType<typeof makeTestDatabase>;
+beforeAll(() => {
+  test = makeTestDatabase();
+});
+afterAll(() => test.remove());
+const plan = (sql: string) =>
+  (test.database.$client.prepare(`EXPLAIN QUERY PLAN ${sql}`).all() as { detail: string }[])
+    .map(({ detail }) => detail)
+    .join('; ');
+
+it.each(queries)('%s', (index, sql) => {
+  expect(plan(sql)).toContain(index);
+});
+it('no index is left out of this list', () => {
+  const named = test.database.$client
+    .prepare(
+      "SELECT name FROM sqlite_master WHERE type = 'index' AND sql IS NOT NULL AND sql NOT LIKE '%UNIQUE%'",
+    )
+    .pluck()
+    .all() as string[];
+  expect(named.toSorted()).toEqual(queries.map(([index]) => index).toSorted());
+});
+it('epochs and spans are searched by key, never scanned', () => {
+  const bySlot =
+    "SELECT * FROM epochs WHERE slot IN (SELECT value FROM json_each('[1]')) AND rover_id = 1 AND time >= 5";
+  expect(plan(bySlot)).toMatch(/SEARCH epochs USING PRIMARY KEY \(slot=\? AND rover_id=\? AND time>\?\)/);
+  const window = `SELECT * FROM spans WHERE rover_id = 1 AND start_at <= 9 AND start_at >=
+    (SELECT coalesce(max(start_at), 5) FROM spans WHERE rover_id = 1 AND start_at <= 5)`;
+  expect(plan(window)).not.toContain('SCAN spans');
+});
