@@ -2,7 +2,6 @@ import { spawn, type ChildProcess } from 'node:child_process';
 import { createHash, randomBytes } from 'node:crypto';
 import { readFileSync } from 'node:fs';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import { PasswordService } from '@hubtack/backend/auth/password.service.js';
 import { migrateDatabase, openDatabase } from '@hubtack/drizzle/database.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
@@ -10,6 +9,7 @@ import { roverAssignments, roverKeys, rovers } from '@hubtack/drizzle/schema/rov
 import { spans } from '@hubtack/drizzle/schema/spans.js';
 import { users } from '@hubtack/drizzle/schema/users.js';
 import { Client } from '../harness/client.js';
+import { fromRoot } from '../harness/root.js';
 import { NODE_FLAGS, bytesWrittenBy, makeFolder, removeFolder } from './child.js';
 import { freePorts } from './free-ports.js';
 
@@ -41,7 +41,7 @@ export class Ours {
     const databaseFile = join(folder, 'hubtack.sqlite');
     const keys = await fill(databaseFile, options);
     const [port, tcpPort] = await freePorts(2);
-    const program = fileURLToPath(new URL('../../../backend/dist/main.js', import.meta.url));
+    const program = fromRoot('backend/dist/main.js');
     const child = spawn(process.execPath, [...NODE_FLAGS, program], {
       stdio: ['ignore', 'ignore', 'inherit'],
       env: {

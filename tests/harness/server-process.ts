@@ -2,11 +2,11 @@ import { spawn, type ChildProcess } from 'node:child_process';
 import { mkdtempSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import { fileURLToPath } from 'node:url';
 import { freePorts } from '../bench/free-ports.js';
+import { fromRoot } from './root.js';
 import { until } from './until.js';
 
-const program = fileURLToPath(new URL('../../backend/dist/main.js', import.meta.url));
+const program = fromRoot('backend/dist/main.js');
 
 /** The built server in a process of its own, that can be killed and started again on the same files and port. */
 export class ServerProcess {

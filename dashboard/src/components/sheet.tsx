@@ -1,14 +1,8 @@
-import {
-  Button,
-  Dialog,
-  DialogBody,
-  DialogContent,
-  DialogSurface,
-  DialogTitle,
-} from '@fluentui/react-components';
-import type { ReactNode } from 'react';
+import { Button } from '@fluentui/react-components';
+import { useEffect, useRef, type ReactNode } from 'react';
+import './sheet.css';
 
-/** A form or a question over the page. */
+/** A form or a question over the page: the browser's own dialog, which keeps the focus and closes on Escape. */
 export function Sheet({
   title,
   onClose,
@@ -18,22 +12,29 @@ export function Sheet({
   onClose: () => void;
   children: ReactNode;
 }) {
+  const dialog = useRef<HTMLDialogElement>(null);
+  useEffect(() => {
+    const shown = dialog.current;
+    shown?.showModal();
+    return () => shown?.close();
+  }, []);
   return (
-    <Dialog open onOpenChange={(_, { open }) => !open && onClose()}>
-      <DialogSurface>
-        <DialogBody>
-          <DialogTitle
-            action={
-              <Button appearance="subtle" onClick={onClose}>
-                Close
-              </Button>
-            }
-          >
-            {title}
-          </DialogTitle>
-          <DialogContent>{children}</DialogContent>
-        </DialogBody>
-      </DialogSurface>
-    </Dialog>
+    <dialog
+      ref={dialog}
+      className="sheet"
+      aria-label={title}
+      onCancel={(event) => {
+        event.preventDefault();
+        onClose();
+      }}
+    >
+      <header>
+        <h2>{title}</h2>
+        <Button appearance="subtle" onClick={onClose}>
+          Close
+        </Button>
+      </header>
+      {children}
+    </dialog>
   );
 }

@@ -36,7 +36,10 @@ export const useAddRover = () =>
 export const useChangeRover = (id: number) =>
   useChange((body: ChangeRoverBody) => api(rover, 'PUT', `/api/rovers/${id}`, body), [roversQuery.queryKey]);
 export const useIssueKey = (id: number) =>
-  useChange((_nothing: void) => api(issuedRoverKey, 'POST', `/api/rovers/${id}/key`, {}), [roversQuery.queryKey]);
+  useChange(
+    (_nothing: void) => api(issuedRoverKey, 'POST', `/api/rovers/${id}/key`, {}),
+    [roversQuery.queryKey],
+  );
 export const useRevokeKey = (id: number) =>
   useChange((keyId: number) => apiVoid('DELETE', `/api/rovers/${id}/keys/${keyId}`), [roversQuery.queryKey]);
 export const useAssignRover = (id: number) =>

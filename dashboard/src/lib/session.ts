@@ -1,5 +1,12 @@
 import { me, signInHints, type Me, type SignInBody } from '@hubtack/contracts/auth/sign-in.js';
-import { queryOptions, useMutation, useQuery, useQueryClient, useSuspenseQuery } from '@tanstack/react-query';
+import {
+  type QueryClient,
+  queryOptions,
+  useMutation,
+  useQuery,
+  useQueryClient,
+  useSuspenseQuery,
+} from '@tanstack/react-query';
 import { ApiError, api, apiVoid } from './api';
 
 const overCodes = ['unauthenticated', 'signInEnded', 'tokenReused'];
@@ -34,14 +41,18 @@ export const useSignInHints = () =>
     }),
   );
 
+/** What one person has read is not the next one's. The sign-in itself stays: pages are looking at it. */
+const forgetOthers = (client: QueryClient) =>
+  client.removeQueries({ predicate: ({ queryKey }) => queryKey[0] !== meQuery.queryKey[0] });
+
 /** Whatever signs in answers with who that is. */
 export function useSigningIn<Body = SignInBody>(path: string) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (body: Body) => api(me, 'POST', path, body),
     onSuccess: (signedIn) => {
-      client.clear();
       client.setQueryData(meQuery.queryKey, signedIn);
+      forgetOthers(client);
     },
   });
 }
@@ -51,8 +62,8 @@ export function useSignOut() {
   return useMutation({
     mutationFn: () => apiVoid('POST', '/api/auth/sign-out'),
     onSettled: () => {
-      client.clear();
       client.setQueryData(meQuery.queryKey, null);
+      forgetOthers(client);
     },
   });
 }

@@ -53,7 +53,11 @@ function Chart({ title, points, of, zone, limit }: ChartProps) {
       </figcaption>
       <div aria-hidden>
         <ResponsiveContainer width="100%" height={CHART_PX}>
-          <LineChart data={points} margin={{ top: 6, right: 8, bottom: 0, left: -18 }}>
+          <LineChart
+            accessibilityLayer={false}
+            data={points}
+            margin={{ top: 6, right: 8, bottom: 0, left: -18 }}
+          >
             <CartesianGrid vertical={false} stroke="var(--rule)" />
             <XAxis
               dataKey="at"

@@ -41,6 +41,7 @@ function ShareChart({ rows }: { rows: ShareRow[] }) {
     <div aria-hidden>
       <ResponsiveContainer width="100%" height={rows.length * ROW_PX + AXIS_PX}>
         <BarChart
+          accessibilityLayer={false}
           data={rows.map(shares)}
           layout="vertical"
           margin={{ top: 4, right: 16, bottom: 0, left: 0 }}
