@@ -1,7 +1,7 @@
 import { readText } from '@hubtack/contracts/testing/read-text.js';
 import type { GgaSentence } from '@hubtack/contracts/nmea/sentence.js';
 import { writeGga } from '@hubtack/contracts/nmea/sentence-writer.js';
-import GPS from 'gps';
+import { GPS } from 'gps';
 import { expect, it } from 'vitest';
 
 // The npm package `gps` 0.9.0: an independent reader of NMEA 0183. Compared where both read the field: it keeps absent
@@ -68,7 +68,7 @@ it('the parser agrees with the gps package on 100,000 generated sentences', () =
     const ours = readText(text).sentences[0] as GgaSentence;
     const theirs = GPS.Parse(text.trim()) as unknown as GpsGga;
     const differ =
-      theirs.valid !== true ||
+      !theirs.valid ||
       Math.abs(ours.latitude! - theirs.lat!) > 1e-9 ||
       Math.abs(ours.longitude! - theirs.lon!) > 1e-9 ||
       ours.satellites !== theirs.satellites ||
