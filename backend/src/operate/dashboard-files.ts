@@ -2,6 +2,7 @@ import { existsSync } from 'node:fs';
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { NestExpressApplication } from '@nestjs/platform-express';
+import compression from 'compression';
 import express, { type NextFunction, type Request, type Response } from 'express';
 
 const built = join(fileURLToPath(import.meta.url), '../../../../dashboard/dist');
