@@ -6,7 +6,7 @@ import {
 } from '@nestjs/common';
 import type { BoardSnapshot, BoardToday, Lane } from '@hubtack/contracts/board/lane.js';
 import type { Response } from 'express';
-import { addTotals, noTotals } from '../fixes/timeline.js';
+import { addTotals, noTotals } from '@hubtack/contracts/fixes/totals.js';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import { CommitQueue } from '../fixes/commit.queue.js';

@@ -1,9 +1,10 @@
 import type { Duty, Lane, LaneChange, RibbonSpan } from '@hubtack/contracts/board/lane.js';
 import type { FixState } from '@hubtack/contracts/fixes/fix-state.js';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
+import { noTotals } from '@hubtack/contracts/fixes/totals.js';
 import { clip, intersect, totalMs, type Interval } from '../common/interval.js';
 import type { Epoch } from '../fixes/epoch.js';
-import { HOLD_MS, clipSpans, noTotals, totalsOf, type HeardSpan } from '../fixes/timeline.js';
+import { HOLD_MS, clipSpans, totalsOf, type HeardSpan } from '../fixes/timeline.js';
 import type { CrewDay } from '../shifts/on-shift.js';
 import type { RosterEntry } from './roster.repository.js';
 

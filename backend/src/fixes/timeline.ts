@@ -1,5 +1,6 @@
 import { fixStateOfQuality, type FixState, type HeardState } from '@hubtack/contracts/fixes/fix-state.js';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
+import { noTotals, totalOf } from '@hubtack/contracts/fixes/totals.js';
 
 /** An epoch speaks for at most this long: hold time H, ms. */
 export const HOLD_MS = 10_000;
@@ -151,29 +152,9 @@ export function partition(
   return parts;
 }
 
-export const noTotals = (): StateTotals => ({ fixedMs: 0, floatMs: 0, codeMs: 0, noneMs: 0, silentMs: 0 });
-
-const totalOf = {
-  fixed: 'fixedMs',
-  float: 'floatMs',
-  code: 'codeMs',
-  none: 'noneMs',
-  silent: 'silentMs',
-} as const satisfies Record<FixState, keyof StateTotals>;
-
 /** Adds up the time of each state. */
 export function totalsOf(parts: readonly { state: FixState; start: number; end: number }[]): StateTotals {
   const totals = noTotals();
   for (const part of parts) totals[totalOf[part.state]] += part.end - part.start;
   return totals;
-}
-
-export function addTotals(left: StateTotals, right: StateTotals): StateTotals {
-  return {
-    fixedMs: left.fixedMs + right.fixedMs,
-    floatMs: left.floatMs + right.floatMs,
-    codeMs: left.codeMs + right.codeMs,
-    noneMs: left.noneMs + right.noneMs,
-    silentMs: left.silentMs + right.silentMs,
-  };
 }

@@ -1,6 +1,7 @@
 import type { Lane } from '@hubtack/contracts/board/lane.js';
 import type { FixState } from '@hubtack/contracts/fixes/fix-state.js';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
+import { totalOf } from '@hubtack/contracts/fixes/totals.js';
 
 /** State now: without another epoch a rover is silent from `heldUntil` on, whether or not the server has said so yet. */
 export function stateNow(lane: Lane, now: number): { state: FixState; since: number | null } {
@@ -8,14 +9,6 @@ export function stateNow(lane: Lane, now: number): { state: FixState; since: num
     return { state: 'silent', since: lane.heldUntil };
   return { state: lane.state, since: lane.since };
 }
-
-const totalOf = {
-  fixed: 'fixedMs',
-  float: 'floatMs',
-  code: 'codeMs',
-  none: 'noneMs',
-  silent: 'silentMs',
-} as const;
 
 /** Today's totals, carried on from `todayAsOf` by the state that has lasted since. */
 export function totalsNow(lane: Lane, now: number): StateTotals {
@@ -27,16 +20,3 @@ export function totalsNow(lane: Lane, now: number): StateTotals {
   if (lane.duty === 'onShift') totals.silentMs += Math.max(0, now - Math.max(heldUntil, lane.todayAsOf));
   return totals;
 }
-
-export const onShiftMs = (totals: StateTotals): number =>
-  totals.fixedMs + totals.floatMs + totals.codeMs + totals.noneMs + totals.silentMs;
-
-export const addTotals = (left: StateTotals, right: StateTotals): StateTotals => ({
-  fixedMs: left.fixedMs + right.fixedMs,
-  floatMs: left.floatMs + right.floatMs,
-  codeMs: left.codeMs + right.codeMs,
-  noneMs: left.noneMs + right.noneMs,
-  silentMs: left.silentMs + right.silentMs,
-});
-
-export const noTotals: StateTotals = { fixedMs: 0, floatMs: 0, codeMs: 0, noneMs: 0, silentMs: 0 };

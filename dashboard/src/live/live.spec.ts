@@ -1,8 +1,9 @@
+import { wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { makeLane } from '../testing/make-lane';
 import { Batcher } from './batcher';
 import { applyEvents, boardStateOf } from './board-state';
-import { onShiftMs, stateNow, totalsNow } from './lane-figures';
+import { stateNow, totalsNow } from './lane-figures';
 import { freshnessOf } from './stream-status';
 
 const event = { serverTime: 5000, changes: [], lanes: [], gone: [] };
@@ -47,7 +48,7 @@ describe('figures go on by the clock', () => {
   it('the state grows until it is held no longer, then silence does; they add up to on-shift time', () => {
     expect(totalsNow(lane, 1_005_000)).toMatchObject({ fixedMs: 905_000, silentMs: 0 });
     expect(totalsNow(lane, 1_030_000)).toMatchObject({ fixedMs: 910_000, silentMs: 20_000 });
-    for (const now of [1_000_000, 1_004_321, 1_099_999]) expect(onShiftMs(totalsNow(lane, now))).toBe(now);
+    for (const now of [1_000_000, 1_004_321, 1_099_999]) expect(wholeOf(totalsNow(lane, now))).toBe(now);
   });
   it('nothing grows on a break or off shift', () => {
     for (const duty of ['paused', 'offShift'] as const)

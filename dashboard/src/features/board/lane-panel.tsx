@@ -1,10 +1,11 @@
+import { wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { Button } from '@fluentui/react-components';
 import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
 import { useEffect, useRef, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import { SpanRibbon } from '../../components/span-ribbon';
 import { StateGlyph } from '../../components/state-glyph';
-import { onShiftMs, stateNow, totalsNow } from '../../live/lane-figures';
+import { stateNow, totalsNow } from '../../live/lane-figures';
 import { useLane, useServerNow } from '../../live/use-lanes';
 import { age, clockTimeSeconds, distance, duration, utc } from '../../lib/format';
 import { percent } from '../../lib/percent';
@@ -74,9 +75,9 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
         <Figure name="Last heard" {...(lane.lastEpochAt === null ? {} : { title: utc(lane.lastEpochAt) })}>
           {lane.lastEpochAt === null ? 'never' : clockTimeSeconds(lane.lastEpochAt, timeZone)}
         </Figure>
-        <Figure name="Fix uptime today">{percent(totals.fixedMs, onShiftMs(totals))}</Figure>
-        <Figure name="On shift today">{duration(onShiftMs(totals))}</Figure>
-        <Figure name="Without a fix today">{duration(onShiftMs(totals) - totals.fixedMs)}</Figure>
+        <Figure name="Fix uptime today">{percent(totals.fixedMs, wholeOf(totals))}</Figure>
+        <Figure name="On shift today">{duration(wholeOf(totals))}</Figure>
+        <Figure name="Without a fix today">{duration(wholeOf(totals) - totals.fixedMs)}</Figure>
         <Figure name="Site">{lane.siteName ?? '–'}</Figure>
         <Figure name="Crew’s telephone">
           {lane.crewPhone ? (

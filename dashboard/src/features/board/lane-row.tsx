@@ -1,9 +1,10 @@
+import { wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import type { Lane } from '@hubtack/contracts/board/lane.js';
 import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
 import { memo } from 'react';
 import { SpanRibbon } from '../../components/span-ribbon';
 import { StateGlyph } from '../../components/state-glyph';
-import { onShiftMs, stateNow, totalsNow } from '../../live/lane-figures';
+import { stateNow, totalsNow } from '../../live/lane-figures';
 import { useLane, useServerNow } from '../../live/use-lanes';
 import { age, clockTime, distance, duration, utc } from '../../lib/format';
 import { percent } from '../../lib/percent';
@@ -99,7 +100,7 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
         {lane.siteName ?? '–'}
       </span>
       <span className="lane-uptime" role="cell" data-name="Fix uptime today">
-        {percent(totals.fixedMs, onShiftMs(totals))}
+        {percent(totals.fixedMs, wholeOf(totals))}
       </span>
     </div>
   );

@@ -1,7 +1,8 @@
+import { addTotals, noTotals, wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import type { Lane } from '@hubtack/contracts/board/lane.js';
 import { fixStates, fixStateWords, type FixState } from '@hubtack/contracts/fixes/fix-state.js';
 import { StateGlyph } from '../../components/state-glyph';
-import { addTotals, noTotals, onShiftMs, stateNow, totalsNow } from '../../live/lane-figures';
+import { stateNow, totalsNow } from '../../live/lane-figures';
 import { percent } from '../../lib/percent';
 import { isOnShift } from './filter';
 
@@ -18,7 +19,7 @@ const words = (state: FixState) => fixStateWords[state].toLowerCase();
 export function StateCounts({ lanes, now, chosen, onChoose }: StateCountsProps) {
   const onShift = lanes.filter((lane) => isOnShift(lane, now));
   const count = (state: FixState) => onShift.filter((lane) => stateNow(lane, now).state === state).length;
-  const totals = lanes.reduce((sum, lane) => addTotals(sum, totalsNow(lane, now)), noTotals);
+  const totals = lanes.reduce((sum, lane) => addTotals(sum, totalsNow(lane, now)), noTotals());
   return (
     <div className="counts">
       <ul>
@@ -49,8 +50,8 @@ export function StateCounts({ lanes, now, chosen, onChoose }: StateCountsProps) 
         })}
       </ul>
       <p>
-        {onShift.length} of {lanes.length} rovers on shift · {percent(totals.fixedMs, onShiftMs(totals))}
-        {onShiftMs(totals) > 0 ? ' fix uptime so far today' : ' on fix uptime yet'}
+        {onShift.length} of {lanes.length} rovers on shift · {percent(totals.fixedMs, wholeOf(totals))}
+        {wholeOf(totals) > 0 ? ' fix uptime so far today' : ' on fix uptime yet'}
       </p>
     </div>
   );

@@ -1,3 +1,4 @@
+import { totalOf, wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { Button } from '@fluentui/react-components';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
 import { fixStateWords, type FixState } from '@hubtack/contracts/fixes/fix-state.js';
@@ -6,7 +7,6 @@ import { useState } from 'react';
 import { Bar, BarChart, CartesianGrid, ResponsiveContainer, Tooltip, XAxis, YAxis } from 'recharts';
 import { StateGlyph } from '../../components/state-glyph';
 import { Empty, Failed, Loading } from '../../components/query-states';
-import { onShiftMs } from '../../live/lane-figures';
 import { clockTime, duration } from '../../lib/format';
 import { percent } from '../../lib/percent';
 import { useMe } from '../../lib/session';
@@ -14,13 +14,6 @@ import { todayQuery } from './today-query';
 import './lane-panel.css';
 
 const order = ['fixed', 'float', 'code', 'none', 'silent'] as const satisfies FixState[];
-const totalOf = {
-  fixed: 'fixedMs',
-  float: 'floatMs',
-  code: 'codeMs',
-  none: 'noneMs',
-  silent: 'silentMs',
-} as const;
 const ROW_PX = 34;
 const AXIS_PX = 50;
 
@@ -30,7 +23,7 @@ interface ShareRow {
 }
 
 const shares = (row: ShareRow) => {
-  const whole = onShiftMs(row.totals);
+  const whole = wholeOf(row.totals);
   const entry: Record<string, string | number> = { name: row.name };
   for (const state of order) entry[state] = whole === 0 ? 0 : (row.totals[totalOf[state]] / whole) * 100;
   return entry;
@@ -98,11 +91,11 @@ function ShareTable({ rows, what }: { rows: ShareRow[]; what: string }) {
         {rows.map(({ name, totals }) => (
           <tr key={name}>
             <th scope="row">{name}</th>
-            <td>{percent(totals.fixedMs, onShiftMs(totals))}</td>
+            <td>{percent(totals.fixedMs, wholeOf(totals))}</td>
             {order.map((state) => (
               <td key={state}>{duration(totals[totalOf[state]])}</td>
             ))}
-            <td>{duration(onShiftMs(totals))}</td>
+            <td>{duration(wholeOf(totals))}</td>
           </tr>
         ))}
       </tbody>
@@ -118,7 +111,7 @@ export default function TodayChart() {
   if (error && !data) return <Failed error={error} retry={() => void refetch()} />;
   if (!data) return <Loading what="today" />;
   const crew = data.crews.find((candidate) => candidate.crewId === crewId);
-  const withTime = data.crews.filter(({ totals }) => onShiftMs(totals) > 0);
+  const withTime = data.crews.filter(({ totals }) => wholeOf(totals) > 0);
   if (withTime.length === 0)
     return <Empty title="Nobody has been on shift today">The chart fills as shifts begin.</Empty>;
   const rows = crew
