@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { publishedGga, publishedOthers } from '../testing/published-sentences.js';
 import { readText } from '../testing/read-text.js';
 import { DAY_MS, type GgaSentence } from './sentence.js';
-import { angleText, checksumOf, writeGga, writeGst, writeRmc } from './sentence-writer.js';
+import { angleText, checksumOf, writeGga, writeGst, writeRmc, writeZda } from './sentence-writer.js';
 
 describe('the sentence writer', () => {
   it('gives the published checksums', () => {
@@ -80,14 +80,16 @@ describe('the sentence writer', () => {
       { numRuns: 2000 },
     );
   });
-  it('writes RMC with the date and GST with the sigmas', () => {
+  it('writes RMC and ZDA with the date and GST with the sigmas', () => {
     const time = Date.parse('2026-10-04T02:30:00Z');
     const { sentences } = readText(
       writeRmc({ time, latitude: -41.4, longitude: 147.1 }) +
+        writeZda({ time }) +
         writeGst({ time, sigmaM: 0.008, sigmaAltitudeM: 0.015 }),
     );
     expect(sentences).toMatchObject([
-      { type: 'date', day: Date.parse('2026-10-04') / DAY_MS, valid: true },
+      { type: 'date', from: 'RMC', day: Date.parse('2026-10-04') / DAY_MS, valid: true },
+      { type: 'date', from: 'ZDA', day: Date.parse('2026-10-04') / DAY_MS, timeOfDayMs: 9_000_000 },
       { type: 'gst', sigmaLatitudeM: 0.008, sigmaAltitudeM: 0.015 },
     ]);
   });

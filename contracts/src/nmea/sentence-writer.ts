@@ -86,3 +86,10 @@ export function writeGst(values: {
   const sigmas = [sigmaM, sigmaM, sigmaAltitudeM].map((sigma) => sigma.toFixed(3)).join(',');
   return framed(`${talker}GST,${timeOfDay(time)},,,,,${sigmas}`);
 }
+
+export function writeZda(values: { talker?: string; time: number }): string {
+  const { talker = 'GN', time } = values;
+  const date = new Date(time);
+  const day = `${pad(date.getUTCDate(), 2)},${pad(date.getUTCMonth() + 1, 2)},${pad(date.getUTCFullYear(), 4)}`;
+  return framed(`${talker}ZDA,${timeOfDay(time)},${day},00,00`);
+}

@@ -1,56 +1,63 @@
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
+import { z } from 'zod';
 import { startMailbox } from '../mailbox/mailbox.js';
 import { Processes, freePort, waitUntilReady } from './processes.js';
 
 const root = fileURLToPath(new URL('../../../', import.meta.url));
 const folder = join(root, 'var/demo');
-const wantedPort = Number(process.env.PORT ?? 3000);
-const port = await freePort(wantedPort);
+const wanted = z.coerce.number().int().min(1).max(65_535).default(3000).safeParse(process.env.PORT);
+if (!wanted.success) {
+  console.error('PORT is no port number');
+  process.exit(2);
+}
+const port = await freePort(wanted.data);
 const tcpPort = await freePort(10_110);
 const url = `http://127.0.0.1:${port}`;
 
 const processes = new Processes();
 const mailbox = await startMailbox({ pagePort: await freePort(1080), folder: join(folder, 'mailbox') });
-const stop = async () => {
+const stop = async (status: number) => {
   await processes.stop();
   await mailbox.close();
-  process.exit(0);
+  process.exit(status);
 };
-for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => void stop());
+for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.once(signal, () => void stop(0));
 
-processes.start(
-  'The server',
-  process.execPath,
-  ['--enable-source-maps', join(root, 'backend/dist/main.js')],
-  {
-    DEMO: 'on',
-    NODE_ENV: 'production',
-    PORT: String(port),
-    NMEA_TCP_PORT: String(tcpPort),
-    DATABASE_FILE: join(folder, 'hubtack.sqlite'),
-    UPLOADS_DIR: join(folder, 'uploads'),
-    SMTP_URL: mailbox.smtpUrl,
-    MAIL_FROM: 'Pennywort Surveys <hubtack@pennywort.example>',
-    CASTER_PRIVATE_ADDRESSES: 'allow',
-    LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
-  },
-);
-await waitUntilReady(url, 60);
-const fleet = fileURLToPath(new URL('../fleet/main.js', import.meta.url));
-processes.start('The fleet', process.execPath, [
-  fleet,
-  '--scenario',
-  'demo',
-  '--url',
-  url,
-  '--keys',
-  join(folder, 'demo-rover-keys.json'),
-]);
+async function start(): Promise<void> {
+  processes.start(
+    'The server',
+    process.execPath,
+    ['--enable-source-maps', join(root, 'backend/dist/main.js')],
+    {
+      DEMO: 'on',
+      NODE_ENV: 'production',
+      PORT: String(port),
+      NMEA_TCP_PORT: String(tcpPort),
+      DATABASE_FILE: join(folder, 'hubtack.sqlite'),
+      UPLOADS_DIR: join(folder, 'uploads'),
+      SMTP_URL: mailbox.smtpUrl,
+      MAIL_FROM: 'Pennywort Surveys <hubtack@pennywort.example>',
+      CASTER_PRIVATE_ADDRESSES: 'allow',
+      LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
+    },
+  );
+  await waitUntilReady(url, 60);
+  const fleet = fileURLToPath(new URL('../fleet/main.js', import.meta.url));
+  const keys = join(folder, 'demo-rover-keys.json');
+  processes.start('The fleet', process.execPath, [fleet, '--scenario', 'demo', '--url', url, '--keys', keys]);
+}
+
+try {
+  await start();
+} catch (error) {
+  console.error((error as Error).message);
+  await stop(1);
+}
 
 const accounts = ['manager', 'dispatcher', 'technician', 'chief.alder', 'chief.banksia', 'chief.dogwood'];
 console.log(`
-Hubtack runs with the demo firm Pennywort Surveys${port === wantedPort ? '' : ` (port ${wantedPort} was taken)`}:
+Hubtack runs with the demo firm Pennywort Surveys${port === wanted.data ? '' : ` (port ${wanted.data} was taken)`}:
 
   ${url}
 

@@ -1,9 +1,9 @@
 import { existsSync } from 'node:fs';
 import { z } from 'zod';
-import { readOptions } from '../cli/options.js';
+import { readOptions, stopWith } from '../cli/options.js';
 import { scenarioNames, scenarios } from '../scenarios/scenarios.js';
 import { runFleet } from './fleet.js';
-import { keysFromFile, makeRovers } from './rover-keys.js';
+import { keysFromFile, makeRovers, type FleetRover } from './rover-keys.js';
 import { HttpLink, TcpLink } from './rover-link.js';
 
 const usage = `Simulated crews that send real sentences to a running server.
@@ -13,7 +13,10 @@ const usage = `Simulated crews that send real sentences to a running server.
                    [--keys FILE | --email ADDRESS --password WORDS]
 
 Scenarios: ${scenarioNames.join(', ')}
-Keys come from a demo's demo-rover-keys.json, or are made by signing in as a technician or manager.`;
+Keys come from --keys (with --crews, the first N of it); without, from a running demo's own file when no --crews is
+given; else crews, rovers and keys are made by signing in as a technician or manager.`;
+
+const DEMO_KEYS = 'var/demo/demo-rover-keys.json';
 
 const options = readOptions(
   usage,
@@ -42,37 +45,53 @@ const options = readOptions(
       .string()
       .regex(/^[^:]+:\d+$/, 'write HOST:PORT')
       .default('127.0.0.1:10110'),
-    keys: z.string().default('var/demo/demo-rover-keys.json'),
+    keys: z.string().optional(),
     email: z.string().default('manager@pennywort.example'),
     password: z.string().default('tack-in-the-hub'),
   }),
 );
 
 const { url, email, password } = options;
-const fromFile = options.crews === undefined && existsSync(options.keys);
-const rovers = fromFile
-  ? keysFromFile(options.keys)
-  : await makeRovers({ url, email, password }, options.crews ?? 6);
-const [host, port] = options.tcp.split(':') as [string, string];
-const stop = new AbortController();
-for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => stop.abort());
+const keysFile =
+  options.keys ?? (options.crews === undefined && existsSync(DEMO_KEYS) ? DEMO_KEYS : undefined);
+const stopping = new AbortController();
+for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => stopping.abort());
 
-console.log(
-  `${rovers.length} rovers, scenario ${options.scenario}, seed ${options.seed}, over ${options.via}`,
-);
+async function roversToRun(): Promise<FleetRover[]> {
+  if (keysFile === undefined) return makeRovers({ url, email, password }, options.crews ?? 6);
+  const rovers = keysFromFile(keysFile);
+  if (options.crews !== undefined && options.crews > rovers.length)
+    stopWith(`--crews: there are ${rovers.length} keys in ${keysFile}`, usage);
+  return rovers.slice(0, options.crews);
+}
+
 let lastProblem = 0;
-await runFleet({
-  rovers,
-  scenario: scenarios[options.scenario],
-  seed: options.seed,
-  speed: options.speed,
-  durationSeconds: options.duration ?? null,
-  link: ({ key }) => (options.via === 'http' ? new HttpLink(url, key) : new TcpLink(host, Number(port), key)),
-  signal: stop.signal,
-  onProblem: (label, error) => {
-    // One line a second is enough to see that the server is away.
-    if (Date.now() - lastProblem < 1000) return;
-    lastProblem = Date.now();
-    console.error(`${label}: ${error.message}`);
-  },
-});
+const onProblem = (label: string, error: Error) => {
+  // One line a second is enough to see that the server is away.
+  if (Date.now() - lastProblem < 1000) return;
+  lastProblem = Date.now();
+  console.error(`${label}: ${error.message}`);
+};
+
+try {
+  const rovers = await roversToRun();
+  const [host, port] = options.tcp.split(':') as [string, string];
+  console.log(
+    `${rovers.length} rovers, scenario ${options.scenario}, seed ${options.seed}, over ${options.via}`,
+  );
+  await runFleet({
+    rovers,
+    scenario: scenarios[options.scenario],
+    seed: options.seed,
+    speed: options.speed,
+    durationSeconds: options.duration ?? null,
+    link: ({ key }) =>
+      options.via === 'http' ? new HttpLink(url, key) : new TcpLink(host, Number(port), key),
+    signal: stopping.signal,
+    onProblem,
+  });
+} catch (error) {
+  const { message, cause } = error as Error;
+  console.error(cause instanceof Error ? `${message} (${cause.message})` : message);
+  process.exitCode = 1;
+}

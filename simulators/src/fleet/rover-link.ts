@@ -29,6 +29,8 @@ export class HttpLink implements RoverLink {
 
 export class TcpLink implements RoverLink {
   private socket: Socket | null = null;
+  /** What the server said: over TCP it speaks only to refuse. */
+  private refusal = '';
 
   constructor(
     private readonly host: string,
@@ -37,6 +39,7 @@ export class TcpLink implements RoverLink {
   ) {}
 
   async send(sentences: string): Promise<void> {
+    if (this.refusal) throw new Error(`the server says: ${this.refusal}`);
     const socket = this.socket ?? (await this.open());
     await new Promise<void>((resolve, reject) => {
       socket.write(sentences, (error) => (error ? reject(error) : resolve()));
@@ -58,8 +61,9 @@ export class TcpLink implements RoverLink {
       socket.on('close', () => {
         this.socket = null;
       });
-      // Whatever the server says is read and let go, so that its end is seen.
-      socket.resume();
+      socket.on('data', (chunk) => {
+        this.refusal = chunk.toString('latin1').trim();
+      });
     });
   }
 }

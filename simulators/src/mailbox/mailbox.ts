@@ -1,4 +1,4 @@
-import { mkdirSync, writeFileSync } from 'node:fs';
+import { mkdirSync, readdirSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import { join } from 'node:path';
@@ -50,6 +50,12 @@ const receivedMail = (mail: ParsedMail): ReceivedMail => {
   };
 };
 
+/** Mails of earlier runs stay: the number of the last one, 0 for a new folder. */
+function lastNumberIn(folder: string): number {
+  mkdirSync(folder, { recursive: true });
+  return Math.max(0, ...readdirSync(folder).map((name) => Number(/^(\d+)\.eml$/.exec(name)?.[1] ?? 0)));
+}
+
 /** A real SMTP server, on loopback only, that keeps what it gets: the local stand-in for a mail provider. */
 export async function startMailbox(options: {
   smtpPort?: number;
@@ -58,14 +64,11 @@ export async function startMailbox(options: {
 }): Promise<Mailbox> {
   const mails: ReceivedMail[] = [];
   const waiting: { fits: (mail: ReceivedMail) => boolean; resolve: (mail: ReceivedMail) => void }[] = [];
+  let next = options.folder ? lastNumberIn(options.folder) + 1 : 1;
   const keep = (mail: ReceivedMail, raw: Buffer) => {
     mails.push(mail);
-    if (options.folder) {
-      mkdirSync(options.folder, { recursive: true });
-      writeFileSync(join(options.folder, `${String(mails.length).padStart(4, '0')}.eml`), raw, {
-        mode: 0o600,
-      });
-    }
+    if (options.folder)
+      writeFileSync(join(options.folder, `${String(next++).padStart(4, '0')}.eml`), raw, { mode: 0o600 });
     for (const waiter of waiting) if (waiter.fits(mail)) waiter.resolve(mail);
   };
   const smtp = new SMTPServer({
@@ -100,7 +103,8 @@ export async function startMailbox(options: {
           response.end(wantsJson ? JSON.stringify(mails) : page(mails));
         });
   if (web)
-    await new Promise<void>((resolve) => {
+    await new Promise<void>((resolve, reject) => {
+      web.once('error', reject);
       web.listen(options.pagePort ?? 0, LOOPBACK, resolve);
     });
   return {

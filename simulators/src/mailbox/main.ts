@@ -15,10 +15,16 @@ const options = readOptions(
     folder: z.string().default('var/mailbox'),
   }),
 );
-const mailbox = await startMailbox({
-  smtpPort: options.port,
-  pagePort: options.page,
-  folder: options.folder,
-});
-console.log(`SMTP_URL=${mailbox.smtpUrl}\nRead the mails at ${mailbox.pageUrl}`);
-for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => void mailbox.close());
+try {
+  const mailbox = await startMailbox({
+    smtpPort: options.port,
+    pagePort: options.page,
+    folder: options.folder,
+  });
+  console.log(`SMTP_URL=${mailbox.smtpUrl}\nRead the mails at ${mailbox.pageUrl}`);
+  for (const signal of ['SIGINT', 'SIGTERM'] as const) process.once(signal, () => void mailbox.close());
+} catch (error) {
+  const { code, message } = error as NodeJS.ErrnoException;
+  console.error(code === 'EADDRINUSE' ? `${message}: say another --port or --page` : message);
+  process.exit(1);
+}

@@ -1,5 +1,6 @@
 const LF = 10;
-/** A stretch without any line end (another protocol) is cut here, so that memory stays bounded. */
+const DOLLAR = 36;
+/** A stretch without any line end (another protocol, or lines that end in CR alone) is cut here, so that memory stays bounded. */
 const LONGEST = 4096;
 
 /** Cuts bytes at line ends, whatever the chunks. Bytes pass through unchanged: they may be of other protocols. */
@@ -12,10 +13,15 @@ export class LineSplitter {
     bytes.set(chunk, this.rest.length);
     const lines: Uint8Array[] = [];
     let from = 0;
+    let dollar = 0;
     for (let at = 0; at < bytes.length; at++) {
-      if (bytes[at] !== LF && at - from < LONGEST) continue;
-      lines.push(bytes.slice(from, at + 1));
-      from = at + 1;
+      if (bytes[at] === DOLLAR) dollar = at;
+      const isEnd = bytes[at] === LF;
+      if (!isEnd && at - from < LONGEST) continue;
+      // A sentence may be on its way: the cut goes before it, never through it.
+      const end = !isEnd && dollar > from ? dollar : at + 1;
+      lines.push(bytes.slice(from, end));
+      from = end;
     }
     this.rest = bytes.slice(from);
     return lines;

@@ -10,11 +10,12 @@ export interface Post {
 const MOST_LINES = 500;
 const MOST_BYTES = 200_000;
 
-/** Gathers lines into posts. A post is cut before the first GGA of an instant, so that what belongs together stays so. */
+/** Gathers lines into posts. A full post is cut where the next instant begins, so that what belongs together stays so. */
 export class PostBuilder {
   private lines: Uint8Array[] = [];
   private bytes = 0;
   private firstTimeOfDayMs: number | null = null;
+  private lastTimeOfDayMs: number | null = null;
   private newest: number | null = null;
 
   get isEmpty(): boolean {
@@ -23,15 +24,17 @@ export class PostBuilder {
 
   /** Adds a line; answers a finished post when the line begins the next one. `newest`: ms UTC the log has got to, if known. */
   add(line: Uint8Array, sentences: readonly Sentence[], newest: number | null): Post | null {
-    const begins = sentences.some(({ type }) => type === 'gga');
+    const times = sentences.map((sentence) => ('timeOfDayMs' in sentence ? sentence.timeOfDayMs : null));
+    const time = times.find((timeOfDayMs) => timeOfDayMs !== null) ?? null;
+    const begins = time !== null && time !== this.lastTimeOfDayMs;
     const isFull = this.lines.length >= MOST_LINES || this.bytes >= MOST_BYTES;
-    const finished = isFull && (begins || this.lines.length >= 2 * MOST_LINES) ? this.take() : null;
+    const isOverfull = this.lines.length >= 2 * MOST_LINES || this.bytes >= 2 * MOST_BYTES;
+    const finished = (isFull && begins) || isOverfull ? this.take() : null;
     this.lines.push(line);
     this.bytes += line.length;
     this.newest = newest ?? this.newest;
-    for (const sentence of sentences) {
-      if ('timeOfDayMs' in sentence) this.firstTimeOfDayMs ??= sentence.timeOfDayMs;
-    }
+    this.firstTimeOfDayMs ??= time;
+    this.lastTimeOfDayMs = time ?? this.lastTimeOfDayMs;
     return finished;
   }
 
@@ -47,6 +50,7 @@ export class PostBuilder {
     this.lines = [];
     this.bytes = 0;
     this.firstTimeOfDayMs = null;
+    this.lastTimeOfDayMs = null;
     this.newest = null;
     return { date, body };
   }

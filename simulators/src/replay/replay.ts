@@ -20,45 +20,73 @@ export interface ReplayOptions {
   /** Log time over wall time; Infinity sends as fast as it is taken. */
   speed: number;
   keep: (post: Post) => void | Promise<void>;
+  /** Ends the waiting between instants; what was read is still handed on. */
+  stop?: AbortSignal;
 }
 
-/** Reads a source to its end and hands on posts, with the log's own timing when its speed asks for it. */
+/** Reads a source to its end and hands on posts, with the log's own timing when its speed asks for it. Throws what `keep` throws. */
 export async function replay(options: ReplayOptions): Promise<void> {
-  const { source, speed, keep } = options;
+  const { source, speed, keep, stop } = options;
   const splitter = new LineSplitter();
   const clock = new LogClock(options.firstDay, options.isStated);
   const builder = new PostBuilder();
   const keepsTime = !source.live && Number.isFinite(speed);
   let timer: NodeJS.Timeout | null = null;
   let writing: Promise<void> = Promise.resolve();
+  let failure: unknown = null;
   const handOn = (post: Post | null) => {
-    if (post) writing = writing.then(() => keep(post));
+    if (!post) return;
+    writing = writing
+      .then(() => (failure === null ? keep(post) : undefined))
+      .catch((error: unknown) => {
+        failure ??= error;
+      });
   };
   const flush = () => {
     if (timer) clearTimeout(timer);
     timer = null;
     handOn(builder.take());
   };
+  const written = async () => {
+    await writing;
+    if (failure !== null) throw failure;
+  };
   let previous: number | null = null;
+  let dueAt = performance.now();
   const takeLine = async (line: Uint8Array) => {
     const sentences = sentencesIn(line);
     clock.take(sentences, source.live ? Date.now() : null);
-    const step = previous === null || clock.now === null ? 0 : clock.now - previous;
+    const isStep = previous !== null && clock.now !== null && !clock.redated;
+    const step = isStep ? clock.now! - previous! : 0;
     previous = clock.now ?? previous;
     // A post states one date and its sentences go on from it, so it never spans a long gap.
-    if (step > LONG_GAP_MS && !clock.redated) flush();
+    if (step > LONG_GAP_MS) flush();
     if (keepsTime && step > 0) {
       flush();
-      await delay(Math.min(step, LONGEST_PAUSE_MS) / speed);
+      // Against the time it should be, not from the last one on: a day's replay does not fall behind.
+      dueAt += Math.min(step, LONGEST_PAUSE_MS) / speed;
+      const wait = dueAt - performance.now();
+      if (wait > 0) await delay(wait, undefined, stop ? { signal: stop } : {}).catch(() => undefined);
     }
     handOn(builder.add(line, sentences, clock.now));
     if (source.live && timer === null) timer = setTimeout(flush, LIVE_POST_MS);
+    if (failure !== null) await written();
   };
-  for await (const chunk of source.bytes) {
-    for (const line of splitter.push(chunk)) await takeLine(line);
-    if (!source.live) await writing;
+  const takeLines = async (lines: Uint8Array[]) => {
+    for (const line of lines) {
+      if (stop?.aborted && !source.live) return;
+      await takeLine(line);
+    }
+  };
+  try {
+    for await (const chunk of source.bytes) {
+      await takeLines(splitter.push(chunk));
+      if (!source.live) await written();
+    }
+    await takeLines(splitter.end());
+  } finally {
+    flush();
+    await writing;
   }
-  for (const line of splitter.end()) await takeLine(line);
-  flush();
-  await writing;
+  await written();
 }

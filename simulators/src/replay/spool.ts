@@ -19,18 +19,22 @@ const NO_DATE = '-';
  * Posts on disk, in order, one file each: first line the date, then the bytes. A post counts as kept once its file has
  * been synced and renamed into place, and is taken away only after the server has answered for it; so a kill at any
  * point loses nothing, and at worst sends the last post again, which the server counts as duplicates.
+ * One process at a time owns a folder (`claimFolder`): the list of what waits is read once.
  */
 export class Spool {
   private next: number;
+  private readonly waiting: Set<number>;
 
   constructor(private readonly folder: string) {
     mkdirSync(folder, { recursive: true });
-    this.next = (this.numbers().at(-1) ?? 0) + 1;
+    const numbers = this.numbers();
+    this.waiting = new Set(numbers);
+    this.next = (numbers.at(-1) ?? 0) + 1;
   }
 
   /** Posts that wait. */
   get length(): number {
-    return this.numbers().length;
+    return this.waiting.size;
   }
 
   keep(post: Post): void {
@@ -46,12 +50,13 @@ export class Spool {
     }
     renameSync(unfinished, file);
     this.syncFolder();
-    this.next++;
+    this.waiting.add(this.next++);
   }
 
   /** The oldest post, with its number; null when nothing waits. */
   oldest(): { number: number; post: Post } | null {
-    const [number] = this.numbers();
+    // A set keeps the order of adding, which is the order of numbers.
+    const [number] = this.waiting;
     if (number === undefined) return null;
     const content = readFileSync(join(this.folder, this.nameOf(number)));
     const end = content.indexOf(10);
@@ -62,6 +67,7 @@ export class Spool {
   /** The server has answered for it. */
   done(number: number): void {
     rmSync(join(this.folder, this.nameOf(number)));
+    this.waiting.delete(number);
   }
 
   private nameOf(number: number): string {

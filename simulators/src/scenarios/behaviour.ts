@@ -74,11 +74,10 @@ export const neverCorrected = (): Behaviour => (state) => ({
   stationId: null,
 });
 
-/** Small losses now and then, as on any day. */
+/** Losses of a second now and then, as on any day. */
 export const unrest =
   (meanSeconds: number): Behaviour =>
   (state, seconds, random) => {
-    const roll = chance(random);
-    // A loss of two to six seconds; which seconds are lost depends on the seed, not on a memory.
-    return state.quality === 4 && roll < 1 / meanSeconds && seconds > 60 ? { ...state, quality: 5 } : state;
+    const isLost = chance(random) < 1 / meanSeconds;
+    return isLost && state.quality === 4 && seconds > 60 ? { ...state, quality: 5 } : state;
   };
