@@ -57,6 +57,8 @@ export function configureApplication(app: NestExpressApplication, environment: E
   app.setGlobalPrefix('api', { exclude: ['health/*path', 'metrics'] });
   app.disable('x-powered-by');
   app.disable('etag');
+  // Behind a proxy on this machine everybody would share one address, and one rate limit. No other peer is believed.
+  app.set('trust proxy', 'loopback');
   const logging = { ...(loggingOf(environment).pinoHttp as Options), logger: PinoLogger.root };
   app.use(pinoHttp(logging));
   app.use(security);

@@ -1,4 +1,4 @@
-import { Inject, Injectable } from '@nestjs/common';
+import { Inject, Injectable, Logger } from '@nestjs/common';
 import { JwtService } from '@nestjs/jwt';
 import type {
   FirstManagerBody,
@@ -18,7 +18,7 @@ import { MailService } from '../mail/mail.service.js';
 import { resetMail } from '../mail/mails.js';
 import { SettingsService } from '../settings/settings.service.js';
 import type { Viewer } from './access.js';
-import type { AccessClaims } from './jwt.strategy.js';
+import { ACCESS_CHECKS, type AccessClaims } from './jwt.strategy.js';
 import { PasswordLinksService } from './password-links.service.js';
 import { PasswordService } from './password.service.js';
 import { SessionService, type IssuedSession } from './session.service.js';
@@ -29,6 +29,8 @@ export interface SignedIn extends IssuedSession {
 
 @Injectable()
 export class AuthService {
+  private readonly logger = new Logger(AuthService.name);
+
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly jwt: JwtService,
@@ -42,9 +44,11 @@ export class AuthService {
   ) {}
 
   async signIn(body: SignInBody): Promise<SignedIn> {
+    const checked = this.userOf(body.email)?.passwordHash ?? null;
+    const matches = await this.passwords.verify(checked, body.password);
+    // Read again: the password may have been reset, or the account switched off, while the check was running.
     const user = this.userOf(body.email);
-    const matches = await this.passwords.verify(user?.passwordHash ?? null, body.password);
-    if (!user?.active || !matches)
+    if (!matches || !user?.active || user.passwordHash !== checked)
       throw new ProblemException(401, 'wrongSignIn', 'E-mail address or password is wrong.');
     this.database.update(users).set({ lastSignInAt: this.clock.now() }).where(eq(users.id, user.id)).run();
     return this.withAccess(this.sessions.start({ userId: user.id }));
@@ -59,8 +63,13 @@ export class AuthService {
     return { ...session, accessToken: this.jwt.sign(claims) };
   }
 
-  signOut(sessionId: string): void {
-    this.sessions.end([sessionId], 'signOut');
+  /** Ends the sign-in of whichever cookie still tells which it is. */
+  signOut(tokens: { access: string | null; refresh: string | null }): void {
+    const ids = [
+      tokens.refresh === null ? null : this.sessions.idOf(tokens.refresh),
+      tokens.access === null ? null : this.idOfAccess(tokens.access),
+    ].filter((id) => id !== null);
+    this.sessions.end([...new Set(ids)], 'signOut');
   }
 
   me(viewer: Viewer): Me {
@@ -74,11 +83,16 @@ export class AuthService {
     return { userId, name, email, role, crewId, firmName, timeZone, units };
   }
 
-  /** Mails a reset link when there is such an account. Nobody is told whether there is. */
-  async forgot(email: string): Promise<void> {
-    const user = this.userOf(email);
-    if (!user?.active) return;
-    await this.mail.send(resetMail(user, this.links.make('reset', user.id)));
+  /**
+   * Mails a reset link when there is such an account. Nobody is told whether there is, not by the time it takes
+   * either: everything is done after the answer.
+   */
+  forgot(email: string): void {
+    setImmediate(() => {
+      this.mailResetLink(email).catch((error: unknown) => {
+        this.logger.error({ err: error }, 'no reset link was made');
+      });
+    });
   }
 
   link(token: string): LinkInfo {
@@ -90,6 +104,8 @@ export class AuthService {
 
   /** Sets the password of an invitation or a reset, ends all other sign-ins of the person, and signs in. */
   async setPassword(body: PasswordBody): Promise<SignedIn> {
+    // Once before the costly part, and again after it: another request may have used the link meanwhile.
+    this.links.find(body.token);
     const passwordHash = await this.passwords.hash(body.password);
     const link = this.links.find(body.token);
     const { userId } = link;
@@ -120,6 +136,7 @@ export class AuthService {
 
   /** The first start prints a link; whoever has it becomes the first manager. */
   async makeFirstManager(body: FirstManagerBody): Promise<SignedIn> {
+    this.links.find(body.token);
     const passwordHash = await this.passwords.hash(body.password);
     const link = this.links.find(body.token);
     if (link.purpose !== 'firstManager')
@@ -146,6 +163,20 @@ export class AuthService {
       return user.id;
     });
     return this.withAccess(this.sessions.start({ userId }));
+  }
+
+  private async mailResetLink(email: string): Promise<void> {
+    const user = this.userOf(email);
+    if (user?.active) await this.mail.send(resetMail(user, this.links.make('reset', user.id)));
+  }
+
+  private idOfAccess(token: string): string | null {
+    try {
+      return this.jwt.verify<AccessClaims>(token, ACCESS_CHECKS).sid;
+    } catch {
+      // Run out or not ours: it tells nothing.
+      return null;
+    }
   }
 
   private userOf(email: string) {

@@ -9,7 +9,14 @@ import { SessionService } from './session.service.js';
 
 export const JWT_ISSUER = 'hubtack';
 export const JWT_AUDIENCE = 'hubtack-dashboard';
-export const JWT_ALGORITHM = 'HS256';
+export const JWT_ALGORITHM = 'HS256' as const;
+
+/** What every token is checked for; the algorithm is ours to say, never the token's. */
+export const ACCESS_CHECKS = {
+  issuer: JWT_ISSUER,
+  audience: JWT_AUDIENCE,
+  algorithms: [JWT_ALGORITHM],
+} satisfies { issuer: string; audience: string; algorithms: 'HS256'[] };
 
 export interface AccessClaims {
   sid: string;
@@ -25,9 +32,7 @@ export class JwtStrategy extends PassportStrategy(Strategy) {
     super({
       jwtFromRequest: (request) => cookies.access(request),
       secretOrKey: secrets.sessionSecret,
-      issuer: JWT_ISSUER,
-      audience: JWT_AUDIENCE,
-      algorithms: [JWT_ALGORITHM],
+      ...ACCESS_CHECKS,
       ignoreExpiration: false,
     });
   }

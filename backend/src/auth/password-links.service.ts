@@ -7,6 +7,7 @@ import { ProblemException } from '../common/problem.exception.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
 import { DATABASE } from '../database/database.module.js';
+import { publicUrlOf } from './public-url.js';
 import { hashOfToken, newToken } from './tokens.js';
 
 const HOUR = 3_600_000;
@@ -24,14 +25,17 @@ export class PasswordLinksService {
     private readonly clock: Clock,
   ) {}
 
-  /** Makes a link; earlier ones of the same person (or for the first manager) stop working. Answers its address. */
+  /**
+   * Makes a link; earlier ones of the same person and purpose stop working. An invitation outlives "forgot password",
+   * which anybody may ask for in somebody else's name. Answers its address.
+   */
   make(purpose: LinkPurpose, userId: number | null): string {
     const now = this.clock.now();
     const token = newToken();
     this.database.transaction((tx) => {
       const same = userId === null ? isNull(passwordLinks.userId) : eq(passwordLinks.userId, userId);
       tx.delete(passwordLinks)
-        .where(and(same, isNull(passwordLinks.usedAt)))
+        .where(and(same, eq(passwordLinks.purpose, purpose), isNull(passwordLinks.usedAt)))
         .run();
       tx.insert(passwordLinks)
         .values({
@@ -43,8 +47,7 @@ export class PasswordLinksService {
         })
         .run();
     });
-    const { PUBLIC_URL, HOST, PORT } = this.environment;
-    return new URL(`/link/${token}`, PUBLIC_URL ?? `http://${HOST}:${PORT}`).href;
+    return new URL(`/link/${token}`, publicUrlOf(this.environment)).href;
   }
 
   /** The link of a token; throws when it is unknown, used or too old. */
@@ -63,11 +66,16 @@ export class PasswordLinksService {
     return link;
   }
 
+  /** A link has done its work; other open ones of the same person have none left. */
   markUsed(link: PasswordLink): void {
+    const same =
+      link.userId === null
+        ? eq(passwordLinks.tokenHash, link.tokenHash)
+        : eq(passwordLinks.userId, link.userId);
     this.database
       .update(passwordLinks)
       .set({ usedAt: this.clock.now() })
-      .where(eq(passwordLinks.tokenHash, link.tokenHash))
+      .where(and(same, isNull(passwordLinks.usedAt)))
       .run();
   }
 }

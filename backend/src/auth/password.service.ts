@@ -6,7 +6,7 @@ const OPTIONS = { type: argon2.argon2id, memoryCost: 19_456, timeCost: 2, parall
 
 @Injectable()
 export class PasswordService {
-  private decoy: Promise<string> | null = null;
+  private readonly decoy = this.hash('nobody has this password');
 
   hash(password: string): Promise<string> {
     return argon2.hash(password, OPTIONS);
@@ -14,7 +14,6 @@ export class PasswordService {
 
   /** Takes as long for an account that does not exist, so that time does not tell which do. */
   async verify(passwordHash: string | null, password: string): Promise<boolean> {
-    this.decoy ??= this.hash('nobody has this password');
     const matches = await argon2.verify(passwordHash ?? (await this.decoy), password);
     return matches && passwordHash !== null;
   }

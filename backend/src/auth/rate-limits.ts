@@ -23,10 +23,8 @@ function limiter(limit: number, key: (request: Request) => string, countsSuccess
         new ProblemException(
           429,
           'tooManyRequests',
-          'Too many tries. Wait ten minutes, or use "forgot password".',
-          {
-            retryAfterSeconds: WINDOW_MS / 1000,
-          },
+          // The library has set Retry-After to what is left of the window.
+          'Too many tries. Wait a few minutes, then try again.',
         ),
       ),
   });
@@ -41,6 +39,10 @@ export const signInLimits = () => [
   limiter(60, address, false),
 ];
 
-/** Each of these sends a mail or tries a token. */
-export const linkLimits = () => [limiter(5, (request) => `${address(request)} ${account(request)}`, true)];
+/** Each may send a mail: nobody's mailbox is filled from many addresses, nor many mailboxes from one. */
+export const linkLimits = () => [
+  limiter(5, (request) => account(request) || address(request), true),
+  limiter(20, address, true),
+];
+/** Tries of a token. */
 export const tokenLimits = () => [limiter(30, address, false)];

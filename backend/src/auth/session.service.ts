@@ -4,7 +4,8 @@ import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { displayLinks } from '@hubtack/drizzle/schema/display-links.js';
 import { refreshTokens, signInSessions } from '@hubtack/drizzle/schema/sign-in-sessions.js';
 import { users } from '@hubtack/drizzle/schema/users.js';
-import { and, eq, isNull } from 'drizzle-orm';
+import { and, eq, gte, isNotNull, isNull, lt, ne } from 'drizzle-orm';
+import { AuditService } from '../audit/audit.service.js';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import { ProblemException } from '../common/problem.exception.js';
@@ -18,8 +19,13 @@ const DAY = 24 * HOUR;
 const IDLE_MS = 12 * HOUR;
 const WHOLE_MS = 7 * DAY;
 const DISPLAY_MS = 365 * DAY;
-/** Two tabs may refresh at the same moment with the same token: within this time that is no theft. */
+/**
+ * Two tabs may refresh at the same moment with the same token, and an answer may be lost on a poor mobile link: within
+ * this time, and only until what was given for the token has been used itself, a second use is no theft.
+ */
 const REUSE_GRACE_MS = 10_000;
+/** Used tokens are kept this long to notice theft; a display's would otherwise add up to tens of thousands. */
+const USED_KEPT_MS = 30 * DAY;
 
 export type EndReason = 'signOut' | 'tokenReused' | 'accountChanged' | 'linkRevoked';
 
@@ -39,6 +45,7 @@ export class SessionService {
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly clock: Clock,
     private readonly changes: Changes,
+    private readonly audit: AuditService,
   ) {}
 
   start(owner: { userId: number } | { displayLinkId: number }): IssuedSession {
@@ -66,8 +73,8 @@ export class SessionService {
       .get();
     if (!row || row.session.endedAt !== null || row.session.expiresAt <= now) throw ended();
     const { usedAt, sessionId } = row.token;
-    if (usedAt !== null && now - usedAt > REUSE_GRACE_MS) {
-      this.end([sessionId], 'tokenReused');
+    if (usedAt !== null && (now - usedAt > REUSE_GRACE_MS || this.hasGoneOn(row.token, usedAt))) {
+      this.endAsStolen(sessionId);
       throw new ProblemException(
         401,
         'tokenReused',
@@ -81,6 +88,9 @@ export class SessionService {
       if (usedAt === null)
         tx.update(refreshTokens).set({ usedAt: now }).where(eq(refreshTokens.tokenHash, tokenHash)).run();
       tx.update(signInSessions).set({ expiresAt: endsAt }).where(eq(signInSessions.id, sessionId)).run();
+      tx.delete(refreshTokens)
+        .where(and(eq(refreshTokens.sessionId, sessionId), lt(refreshTokens.usedAt, now - USED_KEPT_MS)))
+        .run();
       return { sessionId, refreshToken: this.issueToken(sessionId, now), endsAt };
     });
   }
@@ -107,6 +117,16 @@ export class SessionService {
     if (row.display && row.display.revokedAt === null)
       return { ...common, userId: null, name: row.display.name, role: 'display', crewId: null };
     throw ended();
+  }
+
+  /** The sign-in that a refresh token belongs to, used or not; null for an unknown one. */
+  idOf(refreshToken: string): string | null {
+    const row = this.database
+      .select({ sessionId: refreshTokens.sessionId })
+      .from(refreshTokens)
+      .where(eq(refreshTokens.tokenHash, hashOfToken(refreshToken)))
+      .get();
+    return row?.sessionId ?? null;
   }
 
   end(sessionIds: readonly string[], reason: EndReason): void {
@@ -137,6 +157,30 @@ export class SessionService {
       .where(and(mine, isNull(signInSessions.endedAt)))
       .all()
       .map(({ id }) => id);
+  }
+
+  /** Whether a token given since this one was used has been used in its turn. */
+  private hasGoneOn(token: typeof refreshTokens.$inferSelect, usedAt: number): boolean {
+    const later = this.database
+      .select({ usedAt: refreshTokens.usedAt })
+      .from(refreshTokens)
+      .where(
+        and(
+          eq(refreshTokens.sessionId, token.sessionId),
+          ne(refreshTokens.tokenHash, token.tokenHash),
+          gte(refreshTokens.issuedAt, usedAt),
+          isNotNull(refreshTokens.usedAt),
+        ),
+      )
+      .limit(1)
+      .get();
+    return later !== undefined;
+  }
+
+  private endAsStolen(sessionId: string): void {
+    const viewer = this.viewer(sessionId);
+    this.audit.record(null, { action: 'signIn.tokenReused', subject: viewer.name });
+    this.end([sessionId], 'tokenReused');
   }
 
   private issueToken(sessionId: string, now: number): string {

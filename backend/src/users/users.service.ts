@@ -3,7 +3,7 @@ import type { ChangeUserBody, InvitedUser, InviteUserBody, User } from '@hubtack
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { users } from '@hubtack/drizzle/schema/users.js';
-import { and, asc, eq, ne } from 'drizzle-orm';
+import { asc, eq, ne } from 'drizzle-orm';
 import { AuditService } from '../audit/audit.service.js';
 import type { Viewer } from '../auth/access.js';
 import { PasswordLinksService } from '../auth/password-links.service.js';
@@ -27,6 +27,9 @@ const userOf = (row: UserRow): User => ({
   status: !row.active ? 'off' : row.passwordHash === null ? 'invited' : 'active',
   lastSignInAt: row.lastSignInAt === null ? null : new Date(row.lastSignInAt).toISOString(),
 });
+/** Counts as a manager: somebody who was only invited cannot sign in yet, and may never do so. */
+const isManager = (row: UserRow): boolean =>
+  row.role === 'manager' && row.active && row.passwordHash !== null;
 const auditOf = ({ name, email, role, crewId, active }: UserRow) => ({ name, email, role, crewId, active });
 
 @Injectable()
@@ -61,6 +64,7 @@ export class UsersService {
   async inviteAgain(viewer: Viewer, id: number): Promise<InvitedUser> {
     const row = this.row(id);
     if (row.passwordHash !== null) throw conflict('This person has a password already.');
+    if (!row.active) throw conflict('This account is switched off. Switch it on first.');
     this.audit.record(viewer, { action: 'user.invitedAgain', subject: row.email });
     return { user: userOf(row), link: await this.sendInvitation(row) };
   }
@@ -70,8 +74,7 @@ export class UsersService {
     const crewId = this.crewFor(body);
     const { before, after } = this.database.transaction((tx) => {
       const before = this.row(id);
-      if (before.role === 'manager' && before.active && (body.role !== 'manager' || !body.active))
-        this.keepOneManager(id);
+      if (isManager(before) && (body.role !== 'manager' || !body.active)) this.keepOneManager(id);
       const { name, role, active } = body;
       const after = tx
         .update(users)
@@ -107,12 +110,8 @@ export class UsersService {
   }
 
   private keepOneManager(exceptId: number): void {
-    const other = this.database
-      .select({ id: users.id })
-      .from(users)
-      .where(and(eq(users.role, 'manager'), eq(users.active, true), ne(users.id, exceptId)))
-      .get();
-    if (!other) throw conflict('This is the last manager. Make another one first.');
+    const others = this.database.select().from(users).where(ne(users.id, exceptId)).all();
+    if (!others.some(isManager)) throw conflict('This is the last manager. Make another one first.');
   }
 
   private row(id: number): UserRow {
