@@ -5,6 +5,12 @@ import './theme/tokens.css';
 import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
 import { App } from './app/app';
+import { queryClient } from './lib/query-client';
+import { meQuery } from './lib/session';
+
+// Who is signed in is asked, and the board's own code fetched, while the rest of the page gets ready.
+void queryClient.prefetchQuery(meQuery);
+if (location.pathname === '/') void import('./features/board/board-page');
 
 createRoot(document.getElementById('root')!).render(
   <StrictMode>

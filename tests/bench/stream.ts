@@ -157,7 +157,8 @@ export async function freshness(): Promise<Row[]> {
 /** Twenty of two hundred readers stop reading: what the others notice, and what it costs in memory. */
 export async function stalled(): Promise<Row[]> {
   const without = await measureFreshness(500, 200, 0, 25);
-  const withStalled = await measureFreshness(500, 200, 20, 25);
+  // Long enough for the buffers of the network to fill, and then for the server to lose patience.
+  const withStalled = await measureFreshness(500, 200, 20, 45);
   const [value, floor] = [withStalled, without].map(({ waits }) => percentile(waits, 0.99)) as [
     number,
     number,

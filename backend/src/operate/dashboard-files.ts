@@ -12,6 +12,13 @@ export function serveDashboard(app: NestExpressApplication): void {
   const page = join(built, 'index.html');
   if (!existsSync(page)) return;
   const isServers = (path: string) => /^\/(api|health|metrics)(\/|$)/.test(path);
+  // For phones in the field. Never the board stream, which must not wait for a compressor's block.
+  app.use(
+    compression({
+      filter: (request: Request, response: Response) =>
+        !isServers(request.path) && compression.filter(request, response),
+    }),
+  );
   app.use(
     '/assets',
     express.static(join(built, 'assets'), { immutable: true, maxAge: '365d', fallthrough: false }),
