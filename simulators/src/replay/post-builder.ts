@@ -4,6 +4,8 @@ import { DAY_MS, type Sentence } from '@hubtack/contracts/nmea/sentence.js';
 export interface Post {
   /** UTC date of its first dated sentence, YYYY-MM-DD; null when nobody knows. */
   date: string | null;
+  /** From its first to its newest instant, ms UTC; absent when they are not known. */
+  span?: { from: number; to: number };
   body: Uint8Array;
 }
 
@@ -46,19 +48,21 @@ export class PostBuilder {
       body.set(line, offset);
       offset += line.length;
     }
-    const date = this.firstDate();
+    const from = this.firstTime();
+    const to = this.newest;
     this.lines = [];
     this.bytes = 0;
     this.firstTimeOfDayMs = null;
     this.lastTimeOfDayMs = null;
     this.newest = null;
-    return { date, body };
+    if (from === null || to === null) return { date: null, body };
+    return { date: new Date(from).toISOString().slice(0, 10), span: { from, to }, body };
   }
 
   /** Counted back from the newest sentence: an RMC or ZDA within the post may be what first told the date. */
-  private firstDate(): string | null {
+  private firstTime(): number | null {
     if (this.firstTimeOfDayMs === null || this.newest === null) return null;
     const day = Math.round((this.newest - this.firstTimeOfDayMs) / DAY_MS);
-    return new Date(day * DAY_MS).toISOString().slice(0, 10);
+    return day * DAY_MS + this.firstTimeOfDayMs;
   }
 }

@@ -13,8 +13,9 @@ export interface Source {
 /** A receiver that went away is looked for again after this time. */
 const AGAIN_MS = 2000;
 
-/** The bytes of a stream until it ends, or somebody says stop, which is no error. */
-async function* untilStopped(stream: Readable, stop?: AbortSignal): AsyncGenerator<Uint8Array> {
+/** The bytes of a stream until it ends, or somebody says stop, which is no error. Opened when first read. */
+async function* untilStopped(open: () => Readable, stop?: AbortSignal): AsyncGenerator<Uint8Array> {
+  const stream = open();
   const destroy = () => stream.destroy();
   stop?.addEventListener('abort', destroy);
   if (stop?.aborted) destroy();
@@ -29,11 +30,11 @@ async function* untilStopped(stream: Readable, stop?: AbortSignal): AsyncGenerat
 
 export const fileSource = (file: string, stop?: AbortSignal): Source => ({
   live: false,
-  bytes: untilStopped(createReadStream(file), stop),
+  bytes: untilStopped(() => createReadStream(file), stop),
 });
 export const stdinSource = (stop?: AbortSignal): Source => ({
   live: true,
-  bytes: untilStopped(process.stdin, stop),
+  bytes: untilStopped(() => process.stdin, stop),
 });
 
 export interface ReceiverOptions {
@@ -50,7 +51,7 @@ async function* everAgain(open: () => Readable, options: ReceiverOptions): Async
   while (!stop.aborted) {
     let why = 'it has closed the connection';
     try {
-      for await (const chunk of untilStopped(open(), stop)) {
+      for await (const chunk of untilStopped(open, stop)) {
         isLost = false;
         yield chunk;
       }

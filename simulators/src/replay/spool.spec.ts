@@ -56,3 +56,57 @@ it('keeps the date and every byte of a post', () => {
   expect([post.date, [...post.body]]).toEqual(['2026-03-09', [...body]]);
   rmSync(folder, { recursive: true });
 });
+
+it('what waited is joined in order, but never over a gap in which a day could hide', () => {
+  const SECOND = 1000;
+  const gaps = fc.array(fc.constantFrom(SECOND, 60 * SECOND, 3_600_000, 3_600_001, 13 * 3_600_000, -SECOND), {
+    maxLength: 60,
+  });
+  fc.assert(
+    fc.property(gaps, fc.integer({ min: 1, max: 20_000 }), (steps, size) => {
+      const folder = mkdtempSync(join(tmpdir(), 'hubtack-spool-'));
+      const spool = new Spool(folder);
+      let time = Date.parse('2026-03-09T20:00:00Z');
+      const kept = steps.map((step, index) => {
+        const from = time;
+        time += step;
+        const date = new Date(from).toISOString().slice(0, 10);
+        const post = { date, span: { from, to: from }, body: new Uint8Array(size).fill(index) };
+        spool.keep(post);
+        return post;
+      });
+      const sent: number[] = [];
+      for (let oldest = spool.oldest(); oldest; oldest = new Spool(folder).oldest()) {
+        const { post, number } = oldest;
+        const parts = Array.from({ length: post.body.length / size }, (_, part) => post.body[part * size]!);
+        expect(post.body.length).toBeLessThanOrEqual(Math.max(size, 50_000));
+        expect(post.date).toBe(kept[parts[0]!]!.date);
+        for (const part of parts.slice(1)) {
+          expect(kept[part]!.span.from - kept[part - 1]!.span.to).toBeLessThanOrEqual(3_600_000);
+          expect(kept[part]!.span.from).toBeGreaterThanOrEqual(kept[part - 1]!.span.to);
+        }
+        sent.push(...parts);
+        new Spool(folder).done(number);
+      }
+      expect(sent).toEqual(kept.map((_, index) => index));
+      rmSync(folder, { recursive: true });
+    }),
+    { numRuns: 40 },
+  );
+});
+
+it('minutes of seconds that waited go out in a few posts', () => {
+  const folder = mkdtempSync(join(tmpdir(), 'hubtack-spool-'));
+  const spool = new Spool(folder);
+  for (let second = 0; second < 200; second++) {
+    const time = Date.parse('2026-03-09T10:00:00Z') + second * 1000;
+    spool.keep({ date: '2026-03-09', span: { from: time, to: time }, body: new Uint8Array(300) });
+  }
+  let posts = 0;
+  for (let oldest = spool.oldest(); oldest; oldest = spool.oldest()) {
+    posts++;
+    spool.done(oldest.number);
+  }
+  expect([posts, spool.length]).toEqual([2, 0]);
+  rmSync(folder, { recursive: true });
+});
