@@ -6,11 +6,16 @@ import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
 import { App } from './app/app';
 import { queryClient } from './lib/query-client';
+import { boardQuery } from './live/board-query';
 import { meQuery } from './lib/session';
 
-// Who is signed in is asked, and the board's own code fetched, while the rest of the page gets ready.
-void queryClient.prefetchQuery(meQuery);
-if (location.pathname === '/') void import('./features/board/board-page');
+/** Who is signed in, the board's code and its lanes are fetched while the rest of the page gets ready. */
+async function fetchAhead(): Promise<void> {
+  if (location.pathname === '/') void import('./features/board/board-page');
+  await queryClient.prefetchQuery(meQuery);
+  if (queryClient.getQueryData(meQuery.queryKey)) await queryClient.prefetchQuery(boardQuery);
+}
+void fetchAhead();
 
 createRoot(document.getElementById('root')!).render(
   <StrictMode>

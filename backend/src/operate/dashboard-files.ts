@@ -1,27 +1,34 @@
-import { existsSync } from 'node:fs';
-import { join } from 'node:path';
+import { existsSync, readdirSync } from 'node:fs';
+import { extname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { NestExpressApplication } from '@nestjs/platform-express';
-import compression from 'compression';
-import express, { type NextFunction, type Request, type Response } from 'express';
+import express, { type NextFunction, type Request, type RequestHandler, type Response } from 'express';
 
 const built = join(fileURLToPath(import.meta.url), '../../../../dashboard/dist');
+
+/** Sends the compressed twin that the build wrote beside a file, to whoever can read it: for phones in the field. */
+function compressedTwins(folder: string): RequestHandler {
+  const twins = new Set(readdirSync(folder).filter((name) => name.endsWith('.gz')));
+  return (request: Request, response: Response, next: NextFunction) => {
+    const twin = `${request.path.slice(1)}.gz`;
+    if (twins.has(twin) && request.acceptsEncodings('gzip')) {
+      response.type(extname(request.path)).set({ 'Content-Encoding': 'gzip', Vary: 'Accept-Encoding' });
+      request.url = `/${twin}`;
+    }
+    next();
+  };
+}
 
 /** Serves the built dashboard: hashed files for a year, and the page itself for every path that is not the server's own. */
 export function serveDashboard(app: NestExpressApplication): void {
   const page = join(built, 'index.html');
   if (!existsSync(page)) return;
+  const assets = join(built, 'assets');
   const isServers = (path: string) => /^\/(api|health|metrics)(\/|$)/.test(path);
-  // For phones in the field. Never the board stream, which must not wait for a compressor's block.
-  app.use(
-    compression({
-      filter: (request: Request, response: Response) =>
-        !isServers(request.path) && compression.filter(request, response),
-    }),
-  );
   app.use(
     '/assets',
-    express.static(join(built, 'assets'), { immutable: true, maxAge: '365d', fallthrough: false }),
+    compressedTwins(assets),
+    express.static(assets, { immutable: true, maxAge: '365d', fallthrough: false }),
   );
   app.use(express.static(built, { index: false, maxAge: '1h' }));
   app.use((request: Request, response: Response, next: NextFunction) => {
