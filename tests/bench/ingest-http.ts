@@ -106,7 +106,7 @@ export async function ingestHttp1(): Promise<Row[]> {
   ];
 }
 
-const SECONDS_AT_1_HZ = 15;
+const SECONDS_AT_1_HZ = 30;
 const WARM_UP_SECONDS = 5;
 /** Receivers are synchronised: their sentences come within this time of the full second. */
 const BURST_MS = 100;
@@ -134,28 +134,34 @@ async function atOneHertz(
   return waits;
 }
 
-/** 500 rovers at 1 Hz, one sentence a post, in bursts: how long each waits for its answer. */
+/**
+ * 500 rovers at 1 Hz, one sentence a post, in bursts: how long each waits for its answer. Each second is a round with its
+ * own p50 and p99; the row is the median of the rounds, so that one second in which the machine was elsewhere decides nothing.
+ */
 export async function ingestAnswer(): Promise<Row[]> {
   const contestants = await start(500, ['nest']);
-  const waits: number[][] = [[], []];
+  const rounds: number[][][] = [[], []];
   const seconds = [new Seconds(), new Seconds()];
   // Turn about, a second each: a server closes a connection that has rested for five.
   for (let second = -WARM_UP_SECONDS; second < SECONDS_AT_1_HZ; second++) {
     for (const [index, connections] of contestants.connections.entries()) {
-      const measured = await atOneHertz(connections, seconds[index]!, 1);
-      if (second >= 0) waits[index]!.push(...measured);
+      const waits = await atOneHertz(connections, seconds[index]!, 1);
+      if (second >= 0) rounds[index]!.push(waits);
     }
   }
   await stop(contestants);
   return [0.5, 0.99].map((p) => {
-    const [ours, floor] = waits.map((list) => percentile(list, p)) as [number, number];
+    const [ours, floor] = rounds.map((list) => median(list.map((waits) => percentile(waits, p)))) as [
+      number,
+      number,
+    ];
     return {
       name: `ingest/answer p${p * 100}`,
       value: ours,
       unit: 'ms',
       floor,
       ratio: ours / floor,
-      n: waits[0]!.length,
+      n: SECONDS_AT_1_HZ,
     };
   });
 }

@@ -1,3 +1,4 @@
+import { board } from './board.js';
 import { ingestAnswer, ingestHttp1, ingestHttp60, capacity } from './ingest-http.js';
 import { ingestTcp } from './ingest-tcp.js';
 import { printRow, type Row } from './report.js';
@@ -13,6 +14,7 @@ const benches: Record<string, () => Promise<Row[]>> = {
   'stream/freshness': freshness,
   'stream/stalled': stalled,
   'timeline/query': timelineQuery,
+  board,
   capacity,
 };
 
