@@ -1,3 +1,4 @@
+import { defaultLimits, type Limits } from '@hubtack/contracts/lost-fixes/limits.js';
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { flag } from './columns.js';
 
@@ -9,4 +10,5 @@ export const firmSettings = sqliteTable('firm_settings', {
   units: text('units', { enum: ['metric', 'feet'] }).notNull(),
   currency: text('currency').notNull(),
   keepPositionsOffShift: flag('keep_positions_off_shift').notNull(),
+  limits: text('limits', { mode: 'json' }).$type<Limits>().notNull().default(defaultLimits),
 });

@@ -1,3 +1,4 @@
+import { pauseReasons } from '@hubtack/contracts/shifts/shift.js';
 import { index, integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { instant } from './columns.js';
 import { crews } from './crews.js';
@@ -12,6 +13,9 @@ export const shifts = sqliteTable(
       .references(() => crews.id),
     startAt: instant('start_at').notNull(),
     endAt: instant('end_at'),
+    /** Who marked it, by name; null for marks of the demo's past. */
+    startedBy: text('started_by'),
+    endedBy: text('ended_by'),
   },
   (table) => [
     // The shift marks of a crew on one local day.
@@ -28,7 +32,8 @@ export const shiftPauses = sqliteTable(
       .references(() => shifts.id, { onDelete: 'cascade' }),
     startAt: instant('start_at').notNull(),
     endAt: instant('end_at'),
-    reason: text('reason', { enum: ['driving', 'lunch', 'totalStation', 'other'] }).notNull(),
+    reason: text('reason', { enum: pauseReasons }).notNull(),
+    markedBy: text('marked_by'),
   },
   (table) => [
     // The pauses of a shift.

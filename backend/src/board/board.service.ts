@@ -64,7 +64,7 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
     const lanes = this.visibleIds(audience)
       .map((id) => this.lanes.lane(id))
       .filter((lane): lane is Lane => lane !== undefined);
-    return { cursor: this.hub.cursor, serverTime: this.clock.now(), lanes };
+    return { cursor: this.hub.cursor, serverTime: this.clock.now(), lanes, lostFixes: [] };
   }
 
   /** On-shift time of today by state, summed over each crew's rovers. */

@@ -1,6 +1,11 @@
 import { Body, Controller, Get, Put } from '@nestjs/common';
 import { ApiOkResponse, ApiTags } from '@nestjs/swagger';
-import { settings, type Settings } from '@hubtack/contracts/settings/settings.js';
+import {
+  settings,
+  settingsBody,
+  type Settings,
+  type SettingsBody,
+} from '@hubtack/contracts/settings/settings.js';
 import { AllowRoles, CurrentViewer, type Viewer } from '../auth/access.js';
 import { SettingsService } from './settings.service.js';
 
@@ -19,7 +24,7 @@ export class SettingsController {
   @Put()
   @AllowRoles()
   @ApiOkResponse({ standardSchema: settings })
-  change(@CurrentViewer() viewer: Viewer, @Body({ schema: settings }) body: Settings): Settings {
+  change(@CurrentViewer() viewer: Viewer, @Body({ schema: settingsBody }) body: SettingsBody): Settings {
     return this.service.change(viewer, body);
   }
 }

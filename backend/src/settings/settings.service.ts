@@ -1,5 +1,6 @@
 import { Inject, Injectable } from '@nestjs/common';
-import type { Settings } from '@hubtack/contracts/settings/settings.js';
+import { defaultLimits } from '@hubtack/contracts/lost-fixes/limits.js';
+import type { Settings, SettingsBody } from '@hubtack/contracts/settings/settings.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { firmSettings } from '@hubtack/drizzle/schema/firm-settings.js';
 import { AuditService } from '../audit/audit.service.js';
@@ -15,6 +16,7 @@ const defaults: Settings = {
   units: 'metric',
   currency: 'AUD',
   keepPositionsOffShift: false,
+  limits: defaultLimits,
 };
 
 @Injectable()
@@ -32,9 +34,10 @@ export class SettingsService {
     return settings;
   }
 
-  change(viewer: Viewer, settings: Settings): Settings {
+  change(viewer: Viewer, body: SettingsBody): Settings {
+    const before = this.get();
+    const settings: Settings = { ...body, limits: body.limits ?? before.limits };
     this.database.transaction((tx) => {
-      const before = this.get();
       tx.insert(firmSettings)
         .values({ id: ONLY_ROW, ...settings })
         .onConflictDoUpdate({ target: firmSettings.id, set: settings })

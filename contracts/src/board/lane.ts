@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { id, instantMs } from '../common.js';
 import { fixState } from '../fixes/fix-state.js';
+import { lostFix } from '../lost-fixes/lost-fix.js';
 import { stateTotals } from '../fixes/timeline.js';
 
 /** A run of one state, [start, end) in ms UTC. Silence is what no span covers. */
@@ -53,6 +54,7 @@ export const boardSnapshot = z.object({
   cursor: z.string(),
   serverTime: instantMs,
   lanes: z.array(lane),
+  lostFixes: z.array(lostFix).describe('Those that have not ended, and are not closed'),
 });
 export type BoardSnapshot = z.infer<typeof boardSnapshot>;
 

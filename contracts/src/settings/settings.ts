@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { shortText } from '../common.js';
+import { limits } from '../lost-fixes/limits.js';
 
 const isTimeZone = (zone: string): boolean => {
   try {
@@ -17,5 +18,9 @@ export const settings = z.object({
   currency: z.string().regex(/^[A-Z]{3}$/, 'Three capital letters, such as AUD (ISO 4217)'),
   /** Positions outside on-shift time are personal data and are dropped unless the firm says otherwise. */
   keepPositionsOffShift: z.boolean(),
+  limits,
 });
 export type Settings = z.infer<typeof settings>;
+/** Limits that are left out stay as they are. */
+export const settingsBody = settings.partial({ limits: true });
+export type SettingsBody = z.infer<typeof settingsBody>;

@@ -1,6 +1,8 @@
 import { z } from 'zod';
 import { id, instantMs } from '../common.js';
 import { lane, laneChange } from '../board/lane.js';
+import { lostFix } from '../lost-fixes/lost-fix.js';
+import { notice } from '../notices/notice.js';
 
 /** `lanes`: what changed since the cursor before. Whole lanes replace, changes merge, gone lanes leave. */
 export const lanesEvent = z.object({
@@ -19,5 +21,12 @@ export type BeatEvent = z.infer<typeof beatEvent>;
 export const resetEvent = z.object({ cursor: z.string() });
 export type ResetEvent = z.infer<typeof resetEvent>;
 
-export const streamEventNames = ['lanes', 'beat', 'reset'] as const;
+/** `lost-fix`: lost fixes as they now stand. Whoever holds only open ones lets go of those that have ended or are closed. */
+export const lostFixEvent = z.object({ serverTime: instantMs, lostFixes: z.array(lostFix) });
+export type LostFixEvent = z.infer<typeof lostFixEvent>;
+
+/** `notice`: for the one person whose stream it is. Not a place to resume from: missed ones are fetched. */
+export const noticeEvent = notice;
+
+export const streamEventNames = ['lanes', 'lost-fix', 'notice', 'beat', 'reset'] as const;
 export type StreamEventName = (typeof streamEventNames)[number];
