@@ -31,11 +31,11 @@ export class BusyBoard {
     return new BusyBoard(page, connections);
   }
 
-  /** All rovers post once a second; now and then all lose or regain their fix together. */
-  async change(seconds: number): Promise<void> {
+  /** All rovers post once a second; every so many seconds all lose their fix for one, which makes each ribbon longer. */
+  async change(seconds: number, loseEvery = 7): Promise<void> {
     for (let count = 0; count < seconds; count++) {
       const fullSecond = Math.floor(Date.now() / 1000) * 1000;
-      const quality = this.second % 7 === 0 ? 5 : 4;
+      const quality = this.second % loseEvery === 0 ? 5 : 4;
       const body = Buffer.from(gga(fullSecond + (this.second % 100), quality), 'latin1');
       this.second++;
       await Promise.all(this.connections.map((connection) => connection.post(body)));
