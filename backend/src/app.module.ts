@@ -15,12 +15,14 @@ import { DisplaysModule } from './displays/displays.module.js';
 import { FixesModule } from './fixes/fixes.module.js';
 import { HealthModule } from './health/health.module.js';
 import { IngestModule } from './ingest/ingest.module.js';
+import { LostFixesModule } from './lost-fixes/lost-fixes.module.js';
 import { MetricsModule } from './metrics/metrics.module.js';
 import { loggingOf } from './operate/logging.js';
 import { OperateModule } from './operate/operate.module.js';
 import { RoversModule } from './rovers/rovers.module.js';
 import { SettingsModule } from './settings/settings.module.js';
 import { SitesModule } from './sites/sites.module.js';
+import { TapsModule } from './taps/taps.module.js';
 import { UsersModule } from './users/users.module.js';
 
 @Module({})
@@ -36,6 +38,7 @@ export class AppModule {
         ClockModule,
         ChangesModule,
         AuditModule,
+        TapsModule,
         MetricsModule,
         AuthModule,
         UsersModule,
@@ -47,6 +50,7 @@ export class AppModule {
         CorrectionsModule,
         FixesModule,
         IngestModule,
+        LostFixesModule,
         BoardModule,
         HealthModule,
         OperateModule,

@@ -60,7 +60,7 @@ CREATE INDEX `lost_fixes_rover` ON `lost_fixes` (`rover_id`,`start_at`);--> stat
 CREATE INDEX `lost_fixes_crew` ON `lost_fixes` (`crew_id`,`start_at`);--> statement-breakpoint
 CREATE INDEX `lost_fixes_mount_point` ON `lost_fixes` (`mount_point`,`start_at`);--> statement-breakpoint
 CREATE INDEX `lost_fixes_shared` ON `lost_fixes` (`shared_id`);--> statement-breakpoint
-CREATE INDEX `lost_fixes_active` ON `lost_fixes` (`closed_at`) WHERE closed_at IS NULL;--> statement-breakpoint
+CREATE INDEX `lost_fixes_active` ON `lost_fixes` (`end_at`) WHERE closed_at IS NULL;--> statement-breakpoint
 CREATE TABLE `notice_rule_owners` (
 	`user_id` integer PRIMARY KEY NOT NULL,
 	FOREIGN KEY (`user_id`) REFERENCES `users`(`id`) ON UPDATE no action ON DELETE cascade

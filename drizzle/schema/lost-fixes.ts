@@ -49,9 +49,9 @@ export const lostFixes = sqliteTable(
     index('lost_fixes_mount_point').on(table.mountPoint, table.startAt),
     // What hangs under a mount point's lost fix.
     index('lost_fixes_shared').on(table.sharedId),
-    // The desk: everything that nobody has closed.
+    // The desk: everything that nobody has closed; the board: what of it has not ended.
     index('lost_fixes_active')
-      .on(table.closedAt)
+      .on(table.endAt)
       .where(sql`closed_at IS NULL`),
   ],
 );

@@ -9,12 +9,13 @@ import { laneFixtures } from './lane-fixtures.js';
 const lanes = new Map(laneFixtures(Number(process.argv[2])).map((lane) => [lane.id, lane]));
 const hub = new StreamHub(
   { crewId: () => null, change: (id) => lanes.get(id), lane: () => undefined },
+  { lostFixes: () => [] },
   new MetricsService(),
 );
 let readers = 0;
 const server = createServer((_request, response) => {
   response.writeHead(200, { 'content-type': 'text/event-stream', 'cache-control': 'no-store' });
-  const reader = new StreamReader(response as never, 'office', 'bench', Infinity, (slow) =>
+  const reader = new StreamReader(response as never, 'office', 'bench', null, Infinity, (slow) =>
     hub.drained(slow, Date.now()),
   );
   hub.join(reader, hub.cursor, Date.now());

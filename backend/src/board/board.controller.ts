@@ -52,7 +52,7 @@ export class BoardController {
   }
 
   /**
-   * Server-sent events `lanes`, `beat` and `reset` (contracts/STREAM.md). Resumes from Last-Event-ID, or from `?cursor=` when
+   * Server-sent events `lanes`, `lost-fix`, `notice`, `beat` and `reset` (contracts/STREAM.md). Resumes from Last-Event-ID, or from `?cursor=` when
    * the page opens a new stream itself. 204 when the sign-in has ended: a browser then stops coming back.
    */
   @Get('stream')
@@ -75,6 +75,7 @@ export class BoardController {
     this.board.follow(response, {
       audience: audienceOf(viewer),
       sessionId: viewer.sessionId,
+      userId: viewer.userId,
       endsAt: Math.min(this.clock.now() + life, viewer.signInEndsAt),
       cursor: lastEventId ?? query.cursor,
     });

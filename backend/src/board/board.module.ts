@@ -1,14 +1,15 @@
 import { Module } from '@nestjs/common';
 import { FixesModule } from '../fixes/fixes.module.js';
+import { LostFixesModule } from '../lost-fixes/lost-fixes.module.js';
 import { ShiftsModule } from '../shifts/shifts.module.js';
 import { BoardController } from './board.controller.js';
 import { BoardService } from './board.service.js';
 import { LanesStore } from './lanes.store.js';
-import { RosterRepository } from './roster.repository.js';
+import { RoversModule } from '../rovers/rovers.module.js';
 
 @Module({
-  imports: [FixesModule, ShiftsModule],
+  imports: [FixesModule, ShiftsModule, RoversModule, LostFixesModule],
   controllers: [BoardController],
-  providers: [BoardService, LanesStore, RosterRepository],
+  providers: [BoardService, LanesStore],
 })
 export class BoardModule {}

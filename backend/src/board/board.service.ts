@@ -7,10 +7,12 @@ import {
 import type { BoardSnapshot, BoardToday, Lane } from '@hubtack/contracts/board/lane.js';
 import type { Response } from 'express';
 import { addTotals, noTotals } from '@hubtack/contracts/fixes/totals.js';
+import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import { CommitQueue } from '../fixes/commit.queue.js';
 import type { RoverChange } from '../fixes/timeline.writer.js';
+import { LostFixesService } from '../lost-fixes/lost-fixes.service.js';
 import { MetricsService } from '../metrics/metrics.service.js';
 import { addMoved, nothingMoved, seesCrew, type Audience } from './frame.js';
 import { LanesStore } from './lanes.store.js';
@@ -35,12 +37,13 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
 
   constructor(
     private readonly lanes: LanesStore,
+    private readonly lostFixes: LostFixesService,
     private readonly queue: CommitQueue,
     private readonly changes: Changes,
     private readonly clock: Clock,
     metrics: MetricsService,
   ) {
-    this.hub = new StreamHub(lanes, metrics);
+    this.hub = new StreamHub(lanes, { lostFixes: (ids) => lostFixes.withCrews(ids) }, metrics);
   }
 
   onApplicationBootstrap(): void {
@@ -49,6 +52,7 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
     this.changes.all.subscribe((change) => {
       if (change.kind === 'firm') this.reload();
       if (change.kind === 'sessions') this.hub.endSessions(change.sessionIds);
+      if (change.kind === 'lostFix') this.moveLostFixes(change.lostFixIds);
     });
     this.sweepTimer = setInterval(() => this.sweep(), SWEEP_MS);
   }
@@ -64,7 +68,12 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
     const lanes = this.visibleIds(audience)
       .map((id) => this.lanes.lane(id))
       .filter((lane): lane is Lane => lane !== undefined);
-    return { cursor: this.hub.cursor, serverTime: this.clock.now(), lanes, lostFixes: [] };
+    return {
+      cursor: this.hub.cursor,
+      serverTime: this.clock.now(),
+      lanes,
+      lostFixes: this.openLostFixes(audience),
+    };
   }
 
   /** On-shift time of today by state, summed over each crew's rovers. */
@@ -96,10 +105,16 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
   /** Connects a board; its stream ends by `endsAt`. */
   follow(
     response: Response,
-    viewer: { audience: Audience; sessionId: string; endsAt: number; cursor: string | undefined },
+    viewer: {
+      audience: Audience;
+      sessionId: string;
+      userId: number | null;
+      endsAt: number;
+      cursor: string | undefined;
+    },
   ): void {
-    const { audience, sessionId, endsAt, cursor } = viewer;
-    const reader = new StreamReader(response, audience, sessionId, endsAt, (slow) =>
+    const { audience, sessionId, userId, endsAt, cursor } = viewer;
+    const reader = new StreamReader(response, audience, sessionId, userId, endsAt, (slow) =>
       this.hub.drained(slow, this.clock.now()),
     );
     response.once('close', () => this.hub.leave(reader));
@@ -108,6 +123,18 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
 
   private visibleIds(audience: Audience): number[] {
     return this.lanes.ids().filter((id) => seesCrew(audience, this.lanes.crewId(id)));
+  }
+
+  private openLostFixes(audience: Audience): LostFix[] {
+    return this.lostFixes
+      .withCrews(this.lostFixes.openIds())
+      .filter(({ crewIds }) => audience === 'office' || crewIds.some((crewId) => seesCrew(audience, crewId)))
+      .map(({ lostFix }) => lostFix);
+  }
+
+  private moveLostFixes(ids: readonly number[]): void {
+    for (const id of ids) this.moved.lostFixes.add(id);
+    this.scheduleFrame();
   }
 
   private heard(changes: readonly RoverChange[]): void {

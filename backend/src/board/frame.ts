@@ -1,7 +1,8 @@
 import type { Lane, LaneChange } from '@hubtack/contracts/board/lane.js';
-import type { LanesEvent, StreamEventName } from '@hubtack/contracts/stream/events.js';
+import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
+import type { LanesEvent, LostFixEvent, StreamEventName } from '@hubtack/contracts/stream/events.js';
 
-/** Which lanes moved since some cursor. */
+/** Which lanes and lost fixes moved since some cursor. */
 export interface Moved {
   /** Figures changed. */
   changed: Set<number>;
@@ -9,16 +10,24 @@ export interface Moved {
   whole: Set<number>;
   /** Crews that had a lane before it was described anew. */
   left: Map<number, Set<number>>;
+  lostFixes: Set<number>;
 }
 
-export const nothingMoved = (): Moved => ({ changed: new Set(), whole: new Set(), left: new Map() });
+export const nothingMoved = (): Moved => ({
+  changed: new Set(),
+  whole: new Set(),
+  left: new Map(),
+  lostFixes: new Set(),
+});
 
-export const hasMoved = (moved: Moved): boolean => moved.changed.size > 0 || moved.whole.size > 0;
+export const hasMoved = (moved: Moved): boolean =>
+  moved.changed.size > 0 || moved.whole.size > 0 || moved.lostFixes.size > 0;
 
 /** Adds what moved later to what moved earlier. */
 export function addMoved(into: Moved, later: Moved): void {
   for (const id of later.changed) into.changed.add(id);
   for (const id of later.whole) into.whole.add(id);
+  for (const id of later.lostFixes) into.lostFixes.add(id);
   for (const [id, crewIds] of later.left) {
     const known = into.left.get(id) ?? new Set();
     for (const crewId of crewIds) known.add(crewId);
@@ -41,6 +50,11 @@ export interface LaneSource {
   crewId(roverId: number): number | null;
   change(roverId: number, withRibbon: boolean): LaneChange | undefined;
   lane(roverId: number): Lane | undefined;
+}
+
+/** Where lost fixes come from: as they now stand, with the crews that may see each. */
+export interface LostFixSource {
+  lostFixes(ids: readonly number[]): { lostFix: LostFix; crewIds: readonly number[] }[];
 }
 
 /**
@@ -74,4 +88,19 @@ export function lanesEventOf(
     if (change) event.changes.push(change);
   }
   return event.lanes.length + event.changes.length + event.gone.length > 0 ? event : null;
+}
+
+/** The `lost-fix` event for an audience; null when none that it may see moved. */
+export function lostFixEventOf(
+  audience: Audience,
+  moved: Moved,
+  source: LostFixSource,
+  serverTime: number,
+): LostFixEvent | null {
+  if (moved.lostFixes.size === 0) return null;
+  const lostFixes = source
+    .lostFixes([...moved.lostFixes])
+    .filter(({ crewIds }) => audience === 'office' || crewIds.some((crewId) => seesCrew(audience, crewId)))
+    .map(({ lostFix }) => lostFix);
+  return lostFixes.length > 0 ? { serverTime, lostFixes } : null;
 }

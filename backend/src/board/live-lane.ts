@@ -6,7 +6,7 @@ import { clip, intersect, totalMs, type Interval } from '../common/interval.js';
 import type { Epoch } from '../fixes/epoch.js';
 import { HOLD_MS, clipSpans, totalsOf, type HeardSpan } from '../fixes/timeline.js';
 import type { CrewDay } from '../shifts/on-shift.js';
-import type { RosterEntry } from './roster.repository.js';
+import type { RosterEntry } from '../rovers/roster.repository.js';
 
 /** How far back the ribbon reaches. */
 export const RIBBON_MS = 3_600_000;

@@ -1,6 +1,15 @@
 import { randomUUID } from 'node:crypto';
 import { MetricsService } from '../metrics/metrics.service.js';
-import { eventText, hasMoved, lanesEventOf, type Audience, type LaneSource, type Moved } from './frame.js';
+import {
+  eventText,
+  hasMoved,
+  lanesEventOf,
+  lostFixEventOf,
+  type Audience,
+  type LaneSource,
+  type LostFixSource,
+  type Moved,
+} from './frame.js';
 import { StreamHistory } from './stream.history.js';
 import type { StreamReader } from './stream.reader.js';
 
@@ -15,7 +24,8 @@ export class StreamHub {
   private readonly readers = new Set<StreamReader>();
 
   constructor(
-    private readonly source: LaneSource,
+    private readonly lanes: LaneSource,
+    private readonly lostFixes: LostFixSource,
     private readonly metrics: MetricsService,
   ) {}
 
@@ -86,6 +96,12 @@ export class StreamHub {
     for (const reader of this.readers) if (sessionIds.includes(reader.sessionId)) reader.end();
   }
 
+  /** To the open boards of one person. */
+  tell(userId: number, event: string, now: number): void {
+    for (const reader of this.readers)
+      if (reader.userId === userId && reader.laggingSince === null) reader.write(event, now);
+  }
+
   endAll(): void {
     for (const reader of this.readers) reader.end();
   }
@@ -107,7 +123,13 @@ export class StreamHub {
     ribbons: ReadonlySet<number>,
     now: number,
   ): Buffer | null {
-    const event = lanesEventOf(audience, moved, ribbons, this.source, now);
-    return event ? Buffer.from(eventText('lanes', event, this.cursor)) : null;
+    const lanes = lanesEventOf(audience, moved, ribbons, this.lanes, now);
+    const lostFixes = lostFixEventOf(audience, moved, this.lostFixes, now);
+    // Lanes first: a lost fix is shown on a lane that is there. Only the last carries the cursor: whoever was cut off between them resumes
+    // before both.
+    const text =
+      (lanes ? eventText('lanes', lanes, lostFixes ? undefined : this.cursor) : '') +
+      (lostFixes ? eventText('lost-fix', lostFixes, this.cursor) : '');
+    return text === '' ? null : Buffer.from(text);
   }
 }

@@ -16,6 +16,7 @@ export class StreamReader {
     private readonly response: Response,
     readonly audience: Audience,
     readonly sessionId: string,
+    readonly userId: number | null,
     readonly endsAt: number,
     onDrained: (reader: StreamReader) => void,
   ) {

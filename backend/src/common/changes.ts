@@ -5,6 +5,10 @@ import { Subject } from 'rxjs';
 export type Change =
   /** Names, assignments, sites, patterns, shifts or settings changed: lanes are described anew. */
   | { kind: 'firm' }
+  /** Shift marks of a crew changed, from this instant on. */
+  | { kind: 'marks'; crewId: number; from: number }
+  /** What is known of these lost fixes changed. */
+  | { kind: 'lostFix'; lostFixIds: number[] }
   /** A rover's keys changed. */
   | { kind: 'roverKeys'; roverId: number }
   /** These sign-ins no longer count, or count with another role. */

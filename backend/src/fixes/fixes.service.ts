@@ -16,7 +16,7 @@ const iso = (time: number): string => new Date(time).toISOString();
 export class FixesService {
   constructor(
     private readonly tracks: TrackStore,
-    private readonly epochs: EpochRepository,
+    private readonly epochRows: EpochRepository,
     private readonly clock: Clock,
   ) {}
 
@@ -49,9 +49,19 @@ export class FixesService {
     return lastTime === null ? null : lastTime + HOLD_MS;
   }
 
+  /** Whether the newest run is fixed; it may have run out (`heldUntil`). */
+  isFixed(roverId: number): boolean {
+    return this.tracks.get(roverId).tail?.state === 'fixed';
+  }
+
+  /** Stored epochs in [from, to), in order of time. */
+  epochs(roverId: number, from: number, to: number): Epoch[] {
+    return to > from ? this.epochRows.list(roverId, from, to) : [];
+  }
+
   /** Epochs of a window for a chart, every n-th so that there are at most MAX_POINTS. */
   series(roverId: number, from: number, to: number): EpochSeries {
-    const epochs = this.epochs.list(roverId, from, to);
+    const epochs = this.epochRows.list(roverId, from, to);
     const every = Math.max(1, Math.ceil(epochs.length / MAX_POINTS));
     const points = epochs
       .filter((_, index) => (epochs.length - 1 - index) % every === 0)

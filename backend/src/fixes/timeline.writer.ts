@@ -27,6 +27,8 @@ export interface RoverChange {
   track: RoverTrack;
   /** Runs began, ended or were corrected (the newest one merely growing does not count). */
   spansChanged: boolean;
+  /** Earliest epoch that came after newer ones; null when all came in order. */
+  lateFrom: number | null;
   accepted: number;
 }
 
@@ -69,7 +71,11 @@ export class TimelineWriter {
   /** Works the late stretches out again; the last thing before the commit. */
   settleLate(): void {
     for (const [roverId, times] of this.late) {
-      for (const stretch of stretchesOf(times, 2 * HOLD_MS)) this.correct(this.changeOf(roverId), stretch);
+      const change = this.changeOf(roverId);
+      for (const stretch of stretchesOf(times, 2 * HOLD_MS)) {
+        this.correct(change, stretch);
+        change.lateFrom = Math.min(change.lateFrom ?? Infinity, stretch.first);
+      }
     }
   }
 
@@ -82,7 +88,7 @@ export class TimelineWriter {
   private changeOf(roverId: number): RoverChange {
     let change = this.touched.get(roverId);
     if (!change) {
-      change = { roverId, track: this.tracks.get(roverId), spansChanged: false, accepted: 0 };
+      change = { roverId, track: this.tracks.get(roverId), spansChanged: false, lateFrom: null, accepted: 0 };
       this.touched.set(roverId, change);
     }
     return change;

@@ -1,5 +1,6 @@
 import { Module } from '@nestjs/common';
 import { FixesModule } from '../fixes/fixes.module.js';
+import { RosterRepository } from './roster.repository.js';
 import { RoverAssignmentsService } from './rover-assignments.service.js';
 import { RoverKeysService } from './rover-keys.service.js';
 import { RoversController } from './rovers.controller.js';
@@ -8,6 +9,7 @@ import { RoversService } from './rovers.service.js';
 @Module({
   imports: [FixesModule],
   controllers: [RoversController],
-  providers: [RoversService, RoverKeysService, RoverAssignmentsService],
+  providers: [RoversService, RoverKeysService, RoverAssignmentsService, RosterRepository],
+  exports: [RosterRepository],
 })
 export class RoversModule {}

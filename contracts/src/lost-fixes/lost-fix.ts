@@ -181,3 +181,6 @@ export type ShelveBody = z.infer<typeof shelveBody>;
 /** Most photos of one lost fix, and the most bytes of one. */
 export const MAX_PHOTOS = 4;
 export const MAX_PHOTO_BYTES = 10 * 1024 * 1024;
+
+/** People of the office whom a lost fix can be handed to. */
+export const people = z.array(z.object({ id, name: z.string() }));

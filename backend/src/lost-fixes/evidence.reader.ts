@@ -1,0 +1,75 @@
+import { Injectable } from '@nestjs/common';
+import { baseDistance } from '../common/base-distance.js';
+import { FixesService } from '../fixes/fixes.service.js';
+import type { Episode } from './detector.js';
+import type { Evidence, EvidenceEpoch } from './diagnosis.js';
+
+const BEFORE_MS = 120_000;
+/** Of a long loss, its first minutes and its newest say what there is to say. */
+const FIRST_MS = 5 * 60_000;
+const NEWEST_MS = 10 * 60_000;
+
+interface Base {
+  baseLatitude: number | null;
+  baseLongitude: number | null;
+}
+
+/** Gathers what is known about a loss from the stored epochs. */
+@Injectable()
+export class EvidenceReader {
+  /** For each rover's shift: up to where its epochs have been looked through, and whether corrections had come. */
+  private readonly looked = new Map<number, { shiftStart: number; until: number; had: boolean }>();
+
+  constructor(private readonly fixes: FixesService) {}
+
+  read(
+    roverId: number,
+    episode: Pick<Episode, 'kind' | 'start' | 'end'>,
+    shiftStart: number,
+    now: number,
+    base: Base,
+    outage: Evidence['outage'],
+  ): Evidence {
+    const { kind, start, end } = episode;
+    const until = end ?? now;
+    const before =
+      kind === 'notHeard' ? [] : this.fixes.epochs(roverId, Math.max(start - BEFORE_MS, shiftStart), start);
+    return {
+      kind,
+      start,
+      now: until,
+      before,
+      since: this.since(roverId, start, until),
+      hadCorrections: this.hadCorrections(roverId, shiftStart, until),
+      baseDistanceM: this.distance(roverId, base),
+      outage,
+    };
+  }
+
+  private since(roverId: number, start: number, until: number): EvidenceEpoch[] {
+    if (until - start <= FIRST_MS + NEWEST_MS) return this.fixes.epochs(roverId, start, until);
+    return [
+      ...this.fixes.epochs(roverId, start, start + FIRST_MS),
+      ...this.fixes.epochs(roverId, until - NEWEST_MS, until),
+    ];
+  }
+
+  /** Goes through the epochs of a shift once; what has been looked through is not looked at again. */
+  private hadCorrections(roverId: number, shiftStart: number, until: number): boolean {
+    const known = this.looked.get(roverId);
+    const goesOn = known?.shiftStart === shiftStart ? known : { shiftStart, until: shiftStart, had: false };
+    if (goesOn.had || until <= goesOn.until) return goesOn.had;
+    const had = this.fixes
+      .epochs(roverId, goesOn.until, until)
+      .some(({ quality, stationId }) => quality === 4 || quality === 5 || stationId !== null);
+    this.looked.set(roverId, { shiftStart, until, had });
+    return had;
+  }
+
+  private distance(roverId: number, { baseLatitude, baseLongitude }: Base): number | null {
+    const latest = this.fixes.latest(roverId);
+    if (latest?.latitude == null || latest.longitude === null) return null;
+    if (baseLatitude === null || baseLongitude === null) return null;
+    return baseDistance(latest.latitude, latest.longitude, baseLatitude, baseLongitude);
+  }
+}
