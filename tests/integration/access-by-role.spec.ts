@@ -29,6 +29,8 @@ let otherCrew: number;
 let ownRover: number;
 let otherRover: number;
 let otherSite: number;
+let ownLostFix: number;
+let otherLostFix: number;
 
 beforeAll(async () => {
   server = await startServer();
@@ -48,6 +50,10 @@ beforeAll(async () => {
   });
   ownRover = (await server.makeRover('R-own', ownCrew)).id;
   otherRover = (await server.makeRover('R-foreign', otherCrew)).id;
+  const flag = async (roverId: number, note: string) =>
+    (await manager.json<{ id: number }>('POST', '/api/lost-fixes', { roverId, word: 'underCover', note })).id;
+  ownLostFix = await flag(ownRover, 'ours');
+  otherLostFix = await flag(otherRover, 'foreign');
   const document = await manager.json<{ paths: Record<string, Record<string, Operation>> }>(
     'GET',
     '/api/openapi.json',
@@ -129,9 +135,17 @@ describe('every route says who may', () => {
     ]);
   });
 
+  // Written out on purpose: each is about the own crew, or the own person.
   it('a crew chief writes nothing of the firm\u2019s', () => {
     const written = open((access) => Array.isArray(access) && access.includes('crewChief'));
-    expect(written.filter((route) => !route.startsWith('GET '))).toEqual([]);
+    expect(written.filter((route) => !route.startsWith('GET '))).toEqual([
+      'DELETE /api/notice-rules',
+      'POST /api/crews/{id}/shift/{step}',
+      'POST /api/lost-fixes',
+      'POST /api/lost-fixes/{id}/photos',
+      'POST /api/notices/seen',
+      'PUT /api/notice-rules',
+    ]);
   });
 
   it('people, displays and the audit are the manager\u2019s alone', () => {
@@ -178,6 +192,7 @@ describe('the document says all that a client needs', () => {
       '/api/auth/sign-out',
       '/api/users/{id}/invite',
       '/api/rovers/{id}/key',
+      '/api/lost-fixes/{id}/take',
     ];
     const wrong = routes
       .filter(({ method, path }) => ['POST', 'PUT'].includes(method) && !bodiless.includes(path))
@@ -209,6 +224,11 @@ describe('a crew chief reaches the own crew only', () => {
     '/api/rovers/{id}': () => otherRover,
     '/api/rovers/{id}/timeline': () => otherRover,
     '/api/rovers/{id}/epochs': () => otherRover,
+    '/api/crews/{id}/day': () => otherCrew,
+    '/api/crews/{id}/shift/{step}': () => otherCrew,
+    '/api/lost-fixes/{id}': () => otherLostFix,
+    '/api/lost-fixes/{id}/photos': () => otherLostFix,
+    '/api/lost-fixes/{id}/photos/{photoId}': () => otherLostFix,
   };
   const window = '?from=2026-01-01T00:00:00Z&to=2026-01-01T01:00:00Z';
 
@@ -218,10 +238,18 @@ describe('a crew chief reaches the own crew only', () => {
       ({ access, path }) => Array.isArray(access) && access.includes('crewChief') && path.includes('{'),
     );
     expect(open.map(({ path }) => path).filter((path) => !(path in foreign))).toEqual([]);
-    for (const { path } of open) {
-      const theirs = path.replace('{id}', String(foreign[path]!()));
-      expect((await chief.call('GET', theirs + window)).status, theirs).toBe(404);
+    for (const { method, path } of open) {
+      const theirs = path
+        .replace('{id}', String(foreign[path]!()))
+        .replace('{step}', 'start')
+        .replace('{photoId}', '1');
+      const body = method === 'GET' ? undefined : {};
+      expect((await chief.call(method, theirs + window, body)).status, `${method} ${theirs}`).toBe(404);
     }
+    const flag = { roverId: otherRover, word: 'underCover', note: null };
+    expect((await chief.call('POST', '/api/lost-fixes', flag)).status).toBe(404);
+    expect((await chief.call('GET', `/api/lost-fixes/${ownLostFix}`)).status).toBe(200);
+    expect((await chief.call('GET', `/api/crews/${ownCrew}/day`)).status).toBe(200);
     for (const path of ['', '/timeline', '/epochs'])
       expect((await chief.call('GET', `/api/rovers/${ownRover}${path}${window}`)).status).toBe(200);
     expect((await chief.call('GET', `/api/crews/${ownCrew}`)).status).toBe(200);

@@ -8,11 +8,11 @@ import type { Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { HeardSpan } from '../fixes/timeline.js';
-import type { CrewDay } from '../shifts/on-shift.js';
+import { dutyAt, type CrewDay } from '../shifts/on-shift.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 import { baseDistance } from '../common/base-distance.js';
 import { nothingMoved, type LaneSource, type Moved } from './frame.js';
-import { RIBBON_MS, dutyAt, laneChangeOf, laneOf, stateAt, type LaneFacts } from './live-lane.js';
+import { RIBBON_MS, laneChangeOf, laneOf, stateAt, type LaneFacts } from './live-lane.js';
 import { RosterRepository, type RosterEntry } from '../rovers/roster.repository.js';
 
 /** A rover without a crew has a lane only while it has been heard of in this time. */

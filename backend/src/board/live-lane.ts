@@ -1,11 +1,11 @@
-import type { Duty, Lane, LaneChange, RibbonSpan } from '@hubtack/contracts/board/lane.js';
+import type { Lane, LaneChange, RibbonSpan } from '@hubtack/contracts/board/lane.js';
 import type { FixState } from '@hubtack/contracts/fixes/fix-state.js';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
 import { noTotals } from '@hubtack/contracts/fixes/totals.js';
 import { clip, intersect, totalMs, type Interval } from '../common/interval.js';
 import type { Epoch } from '../fixes/epoch.js';
 import { HOLD_MS, clipSpans, totalsOf, type HeardSpan } from '../fixes/timeline.js';
-import type { CrewDay } from '../shifts/on-shift.js';
+import { dutyAt, type CrewDay } from '../shifts/on-shift.js';
 import type { RosterEntry } from '../rovers/roster.repository.js';
 
 /** How far back the ribbon reaches. */
@@ -55,13 +55,6 @@ export function todayTotals(facts: LaneFacts, now: number): StateTotals {
   const { fixedMs, floatMs, codeMs, noneMs } = totals;
   totals.silentMs = totalMs(onShift) - fixedMs - floatMs - codeMs - noneMs;
   return totals;
-}
-
-export function dutyAt(crewDay: CrewDay, now: number): Duty {
-  const holds = (interval: Interval) => interval.start <= now && now < interval.end;
-  if (crewDay.basis === 'noShiftSet') return 'noShiftSet';
-  if (crewDay.pauses.some(holds)) return 'paused';
-  return crewDay.onShift.some(holds) ? 'onShift' : 'offShift';
 }
 
 /** Spans of the last hour, since the crew has the rover. */

@@ -9,7 +9,7 @@ import { detectorLimitsOf, episodesOf, type DetectorLimits, type Episode } from 
 import { DiagnosisService } from './diagnosis.service.js';
 import { flagEnd } from './flag-end.js';
 import { LostFixRepository } from './lost-fix.repository.js';
-import type { LostFixRow } from './lost-fix.view.js';
+import { saysLooksWrong, type LostFixRow } from './lost-fix.view.js';
 import { LostFixWriter } from './lost-fix.writer.js';
 import { OutageKeeper } from './outage.keeper.js';
 import { reconcile } from './reconcile.js';
@@ -103,7 +103,9 @@ export class EpisodeKeeper {
     rows: readonly LostFixRow[],
     look: Look,
   ): void {
-    const stored = rows.map(({ id, kind, startAt, endAt, ending }) => ({
+    // A fix that looks wrong is no loss of it, and does not become one.
+    const ofTimeline = rows.filter((row) => !saysLooksWrong(row));
+    const stored = ofTimeline.map(({ id, kind, startAt, endAt, ending }) => ({
       id,
       kind: kind === 'mountPoint' ? ('lostFix' as const) : kind,
       start: startAt,
@@ -161,7 +163,7 @@ export class EpisodeKeeper {
 
   /** A chief's flag that no loss came of is over when the fix has held since; one that says the fix looks wrong, only by a person. */
   private endFlag(row: LostFixRow, shifts: readonly RoverShift[], { now, limits }: Look): void {
-    if (row.endAt !== null || row.closedAt !== null || row.flagWord === 'fixLooksWrong') return;
+    if (row.endAt !== null || row.closedAt !== null || saysLooksWrong(row)) return;
     const current = this.lostFixes.row(row.id)!;
     if (current.kind !== 'flag' || row.roverId === null) return;
     const shift = shifts.findLast(({ start }) => start <= row.startAt);

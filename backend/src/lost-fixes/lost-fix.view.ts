@@ -27,6 +27,10 @@ export function statusOf({ closedAt, endAt, ending, flagAt, takenAt }: StatusCol
   return takenAt === null ? 'open' : 'taken';
 }
 
+/** A chief's word that the receiver says fixed and is wrong: no receiver reports that. */
+export const saysLooksWrong = ({ kind, flagWord }: Pick<LostFixRow, 'kind' | 'flagWord'>): boolean =>
+  kind === 'flag' && flagWord === 'fixLooksWrong';
+
 export function lostFixOf(record: LostFixRecord): LostFix {
   const { row, roverLabel, crewName, crewPhone, siteName, members, photos, advice } = record;
   const { flagAt, flagWord, flagNote, flagBy, takenAt, takenByUserId } = row;

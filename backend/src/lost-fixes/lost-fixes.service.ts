@@ -10,6 +10,7 @@ import type {
 } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { flagLabels } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { causeLabels } from '@hubtack/contracts/lost-fixes/cause.js';
+import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { users } from '@hubtack/drizzle/schema/users.js';
 import { and, asc, eq, ne } from 'drizzle-orm';
@@ -21,11 +22,11 @@ import { DATABASE } from '../database/database.module.js';
 import { RosterRepository } from '../rovers/roster.repository.js';
 import { LostFixAccess } from './lost-fix.access.js';
 import { LostFixRepository, type LostFixChange } from './lost-fix.repository.js';
-import { lostFixOf, type LostFixRow } from './lost-fix.view.js';
+import { lostFixOf, saysLooksWrong, type LostFixRow } from './lost-fix.view.js';
 import { LostFixWatch } from './lost-fix.watch.js';
 import { LostFixWriter } from './lost-fix.writer.js';
 import { NearMountPoints } from './near-mount-points.js';
-import { tapTime } from './tap-time.js';
+import { tapTime } from '../common/tap-time.js';
 
 const PAGE = 100;
 /** Everything that is not closed comes at once. */
@@ -113,15 +114,7 @@ export class LostFixesService {
       flagNote: body.note,
       flagBy: viewer.name,
     } satisfies LostFixChange;
-    const known = this.lostFixes
-      .ofRover(body.roverId, at - 24 * 3_600_000, at + FLAG_SLACK_MS)
-      .findLast(
-        ({ closedAt, ending, startAt, endAt }) =>
-          closedAt === null &&
-          ending !== 'withdrawn' &&
-          startAt <= at + FLAG_SLACK_MS &&
-          (endAt === null || endAt >= at),
-      );
+    const known = this.knownAt(body, at);
     const id = this.database.transaction(() => {
       const { crewId, roverId, mountPoint } = entry;
       const flagged =
@@ -141,6 +134,20 @@ export class LostFixesService {
       return flagged;
     });
     return this.told(id);
+  }
+
+  /** The lost fix that a flag is about; a fix that looks wrong is a matter of its own. */
+  private knownAt({ roverId, word }: FlagBody, at: number): LostFixRow | undefined {
+    return this.lostFixes
+      .ofRover(roverId, at - DAY_MS, at + FLAG_SLACK_MS)
+      .filter((row) => saysLooksWrong(row) === (word === 'fixLooksWrong'))
+      .findLast(
+        ({ closedAt, ending, startAt, endAt }) =>
+          closedAt === null &&
+          ending !== 'withdrawn' &&
+          startAt <= at + FLAG_SLACK_MS &&
+          (endAt === null || endAt >= at),
+      );
   }
 
   /** The second to take it is told who has it. */

@@ -1,3 +1,4 @@
+import type { Duty } from '@hubtack/contracts/board/lane.js';
 import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { clip, subtract, union, type Interval } from '../common/interval.js';
 import { clockTimeOn, localDayOf, weekdayOf } from '../common/local-day.js';
@@ -59,4 +60,11 @@ export function crewDayOf(
   return onShift.length > 0
     ? { basis: 'pattern', onShift, pauses: [] }
     : { basis: 'noShiftSet', onShift: [], pauses: [] };
+}
+
+export function dutyAt(crewDay: CrewDay, now: number): Duty {
+  const holds = (interval: Interval) => interval.start <= now && now < interval.end;
+  if (crewDay.basis === 'noShiftSet') return 'noShiftSet';
+  if (crewDay.pauses.some(holds)) return 'paused';
+  return crewDay.onShift.some(holds) ? 'onShift' : 'offShift';
 }

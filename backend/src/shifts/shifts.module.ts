@@ -1,6 +1,14 @@
 import { Module } from '@nestjs/common';
 import { FixesModule } from '../fixes/fixes.module.js';
+import { SettingsModule } from '../settings/settings.module.js';
+import { ShiftMarksService } from './shift-marks.service.js';
+import { ShiftsController } from './shifts.controller.js';
 import { ShiftsService } from './shifts.service.js';
 
-@Module({ imports: [FixesModule], providers: [ShiftsService], exports: [ShiftsService] })
+@Module({
+  imports: [FixesModule, SettingsModule],
+  controllers: [ShiftsController],
+  providers: [ShiftsService, ShiftMarksService],
+  exports: [ShiftsService, ShiftMarksService],
+})
 export class ShiftsModule {}

@@ -1,4 +1,4 @@
-import { ProblemException } from '../common/problem.exception.js';
+import { ProblemException } from './problem.exception.js';
 
 /** A phone's clock may be ahead by this much. */
 const AHEAD_MS = 60_000;

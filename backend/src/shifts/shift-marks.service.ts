@@ -1,0 +1,299 @@
+import { Inject, Injectable } from '@nestjs/common';
+import type { Shift, ShiftBody, ShiftStep, ShiftStepBody } from '@hubtack/contracts/shifts/shift.js';
+import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
+import { crews } from '@hubtack/drizzle/schema/crews.js';
+import { shiftPauses, shifts } from '@hubtack/drizzle/schema/shifts.js';
+import { and, asc, eq, gt, inArray, isNull, lt, ne, or } from 'drizzle-orm';
+import { DateTime } from 'luxon';
+import { AuditService } from '../audit/audit.service.js';
+import type { Viewer } from '../auth/access.js';
+import { Changes } from '../common/changes.js';
+import { Clock } from '../common/clock.js';
+import type { Interval } from '../common/interval.js';
+import { localDayOf } from '../common/local-day.js';
+import { conflict, notFound, ProblemException } from '../common/problem.exception.js';
+import { tapTime } from '../common/tap-time.js';
+import { DATABASE } from '../database/database.module.js';
+import { SettingsService } from '../settings/settings.service.js';
+import { crewShiftsOf } from './crew-shifts.js';
+import { stepOf, type StepEffect, type StepShift } from './shift-steps.js';
+
+const FOREVER = Number.MAX_SAFE_INTEGER;
+
+/** Shift marks: made by the chief or the dispatcher as the day goes, and set right afterwards by the office. */
+@Injectable()
+export class ShiftMarksService {
+  constructor(
+    @Inject(DATABASE) private readonly database: HubtackDatabase,
+    private readonly settings: SettingsService,
+    private readonly audit: AuditService,
+    private readonly changes: Changes,
+    private readonly clock: Clock,
+  ) {}
+
+  /** Marks of a crew that touch the window, in order. */
+  list(crewId: number, window: Interval): Shift[] {
+    const rows = this.database
+      .select()
+      .from(shifts)
+      .where(
+        and(
+          eq(shifts.crewId, crewId),
+          lt(shifts.startAt, window.end),
+          or(isNull(shifts.endAt), gt(shifts.endAt, window.start)),
+        ),
+      )
+      .orderBy(asc(shifts.startAt))
+      .all();
+    return this.withPauses(rows);
+  }
+
+  /** Start, pause, resume or finish. Throws 409 when that contradicts what is marked. */
+  step(viewer: Viewer, crewId: number, step: ShiftStep, body: ShiftStepBody): void {
+    const at = tapTime(body.at, this.clock.now());
+    this.database.transaction(() => {
+      const crew = this.crew(crewId);
+      const zone = this.settings.get().timeZone;
+      const current = this.markedAt(crewId, at) ?? this.plannedAt(crewId, crew.pattern, at, zone);
+      const clock = (instant: number) => DateTime.fromMillis(instant, { zone }).toFormat('HH:mm');
+      const result = stepOf(step, at, body.reason, current, this.nextStart(crewId, at), clock);
+      if ('refusal' in result) throw conflict(result.refusal);
+      this.write(viewer, crewId, result.effect);
+    });
+    this.announce(crewId, at);
+  }
+
+  add(viewer: Viewer, crewId: number, body: ShiftBody): Shift {
+    this.crew(crewId);
+    const id = this.database.transaction((tx) => {
+      this.checkFree(crewId, body, null);
+      const row = {
+        crewId,
+        startAt: Date.parse(body.start),
+        endAt: body.end === null ? null : Date.parse(body.end),
+        startedBy: viewer.name,
+        endedBy: body.end === null ? null : viewer.name,
+      };
+      const added = tx.insert(shifts).values(row).returning().get().id;
+      this.writePauses(viewer, added, body);
+      this.audit.record(viewer, { action: 'shift.added', subject: this.crew(crewId).name, after: body });
+      return added;
+    });
+    this.announce(crewId, Date.parse(body.start));
+    return this.get(id);
+  }
+
+  change(viewer: Viewer, id: number, body: ShiftBody): Shift {
+    const before = this.get(id);
+    this.database.transaction((tx) => {
+      this.checkFree(before.crewId, body, id);
+      const startAt = Date.parse(body.start);
+      const endAt = body.end === null ? null : Date.parse(body.end);
+      const startedBy = startAt === before.start ? before.startedBy : viewer.name;
+      const endedBy = endAt === before.end ? before.endedBy : viewer.name;
+      tx.update(shifts).set({ startAt, endAt, startedBy, endedBy }).where(eq(shifts.id, id)).run();
+      tx.delete(shiftPauses).where(eq(shiftPauses.shiftId, id)).run();
+      this.writePauses(viewer, id, body);
+      const subject = this.crew(before.crewId).name;
+      this.audit.record(viewer, { action: 'shift.changed', subject, before, after: body });
+    });
+    this.announce(before.crewId, Math.min(before.start, Date.parse(body.start)));
+    return this.get(id);
+  }
+
+  remove(viewer: Viewer, id: number): void {
+    const before = this.get(id);
+    this.database.transaction((tx) => {
+      tx.delete(shifts).where(eq(shifts.id, id)).run();
+      const subject = this.crew(before.crewId).name;
+      this.audit.record(viewer, { action: 'shift.removed', subject, before });
+    });
+    this.announce(before.crewId, before.start);
+  }
+
+  private get(id: number): Shift {
+    const row = this.database.select().from(shifts).where(eq(shifts.id, id)).get();
+    if (!row) throw notFound('This shift');
+    return this.withPauses([row])[0]!;
+  }
+
+  private crew(id: number) {
+    const crew = this.database.select().from(crews).where(eq(crews.id, id)).get();
+    if (!crew) throw notFound('This crew');
+    return crew;
+  }
+
+  private withPauses(rows: (typeof shifts.$inferSelect)[]): Shift[] {
+    const pauses = this.database
+      .select()
+      .from(shiftPauses)
+      .where(
+        inArray(
+          shiftPauses.shiftId,
+          rows.map(({ id }) => id),
+        ),
+      )
+      .orderBy(asc(shiftPauses.startAt))
+      .all();
+    return rows.map(({ id, crewId, startAt, endAt, startedBy, endedBy }) => ({
+      id,
+      crewId,
+      start: startAt,
+      end: endAt,
+      startedBy,
+      endedBy,
+      pauses: pauses
+        .filter(({ shiftId }) => shiftId === id)
+        .map((pause) => ({
+          start: pause.startAt,
+          end: pause.endAt,
+          reason: pause.reason,
+          by: pause.markedBy,
+        })),
+    }));
+  }
+
+  private markedAt(crewId: number, at: number): StepShift | null {
+    const row = this.database
+      .select({ id: shifts.id, start: shifts.startAt, end: shifts.endAt })
+      .from(shifts)
+      .where(
+        and(
+          eq(shifts.crewId, crewId),
+          lt(shifts.startAt, at + 1),
+          or(isNull(shifts.endAt), gt(shifts.endAt, at)),
+        ),
+      )
+      .get();
+    if (!row) return null;
+    const pauses = this.database
+      .select({ id: shiftPauses.id, start: shiftPauses.startAt, end: shiftPauses.endAt })
+      .from(shiftPauses)
+      .where(eq(shiftPauses.shiftId, row.id))
+      .orderBy(asc(shiftPauses.startAt))
+      .all();
+    return { ...row, pauses };
+  }
+
+  private plannedAt(
+    crewId: number,
+    pattern: Parameters<typeof crewShiftsOf>[2],
+    at: number,
+    zone: string,
+  ): StepShift | null {
+    const day = localDayOf(at, zone);
+    const marks = this.list(crewId, { start: day.start - 86_400_000, end: day.end + 86_400_000 });
+    const planned = crewShiftsOf({ start: at, end: at + 1 }, marks, pattern, zone, () => null).find(
+      ({ basis }) => basis === 'pattern',
+    );
+    return planned ? { id: null, start: planned.start, end: planned.end, pauses: [] } : null;
+  }
+
+  /** Start of the first shift marked after an instant. */
+  private nextStart(crewId: number, at: number): number | null {
+    const next = this.database
+      .select({ start: shifts.startAt })
+      .from(shifts)
+      .where(and(eq(shifts.crewId, crewId), gt(shifts.startAt, at)))
+      .orderBy(asc(shifts.startAt))
+      .get();
+    return next?.start ?? null;
+  }
+
+  private write(viewer: Viewer, crewId: number, effect: StepEffect): void {
+    const by = viewer.name;
+    switch (effect.do) {
+      case 'start':
+        this.insert({ crewId, startAt: effect.at, endAt: null, startedBy: by });
+        break;
+      case 'pause':
+        this.database
+          .insert(shiftPauses)
+          .values({
+            shiftId: this.marked(crewId, effect.shift),
+            startAt: effect.at,
+            reason: effect.reason,
+            markedBy: by,
+          })
+          .run();
+        break;
+      case 'resume':
+        this.database
+          .update(shiftPauses)
+          .set({ endAt: effect.at })
+          .where(eq(shiftPauses.id, effect.pauseId))
+          .run();
+        break;
+      case 'finish':
+        this.database
+          .update(shifts)
+          .set({ endAt: effect.at, endedBy: by })
+          .where(eq(shifts.id, this.marked(crewId, effect.shift)))
+          .run();
+        if (effect.openPauseId !== null)
+          this.database
+            .update(shiftPauses)
+            .set({ endAt: effect.at })
+            .where(eq(shiftPauses.id, effect.openPauseId))
+            .run();
+    }
+  }
+
+  /** A planned shift becomes marks, beginning and end as planned, at the first step that is taken in it. */
+  private marked(crewId: number, { id, start, end }: StepShift): number {
+    return id ?? this.insert({ crewId, startAt: start, endAt: end });
+  }
+
+  private insert(values: typeof shifts.$inferInsert): number {
+    return this.database.insert(shifts).values(values).returning({ id: shifts.id }).get().id;
+  }
+
+  private writePauses(viewer: Viewer, shiftId: number, { pauses }: ShiftBody): void {
+    for (const { start, end, reason } of pauses)
+      this.database
+        .insert(shiftPauses)
+        .values({
+          shiftId,
+          startAt: Date.parse(start),
+          endAt: end === null ? null : Date.parse(end),
+          reason,
+          markedBy: viewer.name,
+        })
+        .run();
+  }
+
+  private checkFree(crewId: number, body: ShiftBody, ownId: number | null): void {
+    const start = Date.parse(body.start);
+    const end = body.end === null ? FOREVER : Date.parse(body.end);
+    const refuse = (pointer: string, detail: string) => {
+      throw new ProblemException(400, 'invalidBody', detail, { errors: [{ pointer, detail }] });
+    };
+    if (start > this.clock.now())
+      refuse('/start', 'A shift to come is planned in the crew’s pattern, not marked.');
+    const other = this.database
+      .select({ id: shifts.id })
+      .from(shifts)
+      .where(
+        and(
+          eq(shifts.crewId, crewId),
+          lt(shifts.startAt, end),
+          or(isNull(shifts.endAt), gt(shifts.endAt, start)),
+          ...(ownId === null ? [] : [ne(shifts.id, ownId)]),
+        ),
+      )
+      .get();
+    if (other) refuse('/start', 'It overlaps another shift of this crew.');
+    const overlap = body.pauses
+      .toSorted((a, b) => Date.parse(a.start) - Date.parse(b.start))
+      .some((pause, index, list) => {
+        const before = list[index - 1];
+        return before && (before.end === null || Date.parse(before.end) > Date.parse(pause.start));
+      });
+    if (overlap) refuse('/pauses', 'Pauses overlap.');
+  }
+
+  private announce(crewId: number, from: number): void {
+    this.changes.announce({ kind: 'marks', crewId, from });
+    this.changes.announce({ kind: 'firm' });
+  }
+}
