@@ -9,6 +9,7 @@ import { ClockModule } from './common/clock.js';
 import { ConfigModule } from './config/config.module.js';
 import type { Environment } from './config/environment.js';
 import { CorrectionsModule } from './corrections/corrections.module.js';
+import { CrewDayModule } from './crew-day/crew-day.module.js';
 import { CrewsModule } from './crews/crews.module.js';
 import { DatabaseModule } from './database/database.module.js';
 import { DisplaysModule } from './displays/displays.module.js';
@@ -17,8 +18,10 @@ import { HealthModule } from './health/health.module.js';
 import { IngestModule } from './ingest/ingest.module.js';
 import { LostFixesModule } from './lost-fixes/lost-fixes.module.js';
 import { MetricsModule } from './metrics/metrics.module.js';
+import { NoticesModule } from './notices/notices.module.js';
 import { loggingOf } from './operate/logging.js';
 import { OperateModule } from './operate/operate.module.js';
+import { PhotosModule } from './photos/photos.module.js';
 import { RoversModule } from './rovers/rovers.module.js';
 import { SettingsModule } from './settings/settings.module.js';
 import { SitesModule } from './sites/sites.module.js';
@@ -51,6 +54,9 @@ export class AppModule {
         FixesModule,
         IngestModule,
         LostFixesModule,
+        PhotosModule,
+        CrewDayModule,
+        NoticesModule,
         BoardModule,
         HealthModule,
         OperateModule,

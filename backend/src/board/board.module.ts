@@ -5,10 +5,11 @@ import { ShiftsModule } from '../shifts/shifts.module.js';
 import { BoardController } from './board.controller.js';
 import { BoardService } from './board.service.js';
 import { LanesStore } from './lanes.store.js';
+import { NoticesModule } from '../notices/notices.module.js';
 import { RoversModule } from '../rovers/rovers.module.js';
 
 @Module({
-  imports: [FixesModule, ShiftsModule, RoversModule, LostFixesModule],
+  imports: [FixesModule, ShiftsModule, RoversModule, LostFixesModule, NoticesModule],
   controllers: [BoardController],
   providers: [BoardService, LanesStore],
 })

@@ -14,7 +14,8 @@ import { CommitQueue } from '../fixes/commit.queue.js';
 import type { RoverChange } from '../fixes/timeline.writer.js';
 import { LostFixesService } from '../lost-fixes/lost-fixes.service.js';
 import { MetricsService } from '../metrics/metrics.service.js';
-import { addMoved, nothingMoved, seesCrew, type Audience } from './frame.js';
+import { addMoved, eventText, nothingMoved, seesCrew, type Audience } from './frame.js';
+import { NoticesService } from '../notices/notices.service.js';
 import { LanesStore } from './lanes.store.js';
 import { hourTotals, todayTotals } from './live-lane.js';
 import { StreamHub } from './stream.hub.js';
@@ -38,6 +39,7 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
   constructor(
     private readonly lanes: LanesStore,
     private readonly lostFixes: LostFixesService,
+    private readonly notices: NoticesService,
     private readonly queue: CommitQueue,
     private readonly changes: Changes,
     private readonly clock: Clock,
@@ -54,6 +56,9 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
       if (change.kind === 'sessions') this.hub.endSessions(change.sessionIds);
       if (change.kind === 'lostFix') this.moveLostFixes(change.lostFixIds);
     });
+    this.notices.told.subscribe(({ userId, notice }) =>
+      this.hub.tell(userId, eventText('notice', notice), this.clock.now()),
+    );
     this.sweepTimer = setInterval(() => this.sweep(), SWEEP_MS);
   }
 

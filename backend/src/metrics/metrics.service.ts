@@ -44,6 +44,12 @@ export class MetricsService {
     registers: [this.registry],
   });
 
+  readonly outboxWaiting = new Gauge({
+    name: 'hubtack_outbox_waiting_mails',
+    help: 'Mails that the mail server has not taken yet',
+    registers: [this.registry],
+  });
+
   constructor() {
     collectDefaultMetrics({ register: this.registry });
   }

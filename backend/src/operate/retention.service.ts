@@ -6,6 +6,7 @@ import { epochs, SLOT_MS } from '@hubtack/drizzle/schema/epochs.js';
 import { passwordLinks } from '@hubtack/drizzle/schema/password-links.js';
 import { roverAssignments } from '@hubtack/drizzle/schema/rovers.js';
 import { signInSessions } from '@hubtack/drizzle/schema/sign-in-sessions.js';
+import { taps } from '@hubtack/drizzle/schema/taps.js';
 import { and, asc, eq, gt, gte, inArray, isNotNull, isNull, lt, or, sql } from 'drizzle-orm';
 import { Clock } from '../common/clock.js';
 import { clip, subtract, type Interval as TimeInterval } from '../common/interval.js';
@@ -21,6 +22,7 @@ const HOUR_MS = 3_600_000;
 const SLOTS_AT_ONCE = 20;
 /** Ended sign-ins and links are kept this long for whoever looks into a theft. */
 const ENDED_KEPT_MS = 30 * DAY_MS;
+const TAPS_KEPT_MS = 30 * DAY_MS;
 /** Days before yesterday are looked at again for this long, because stored sentences come late. */
 const DAYS_LOOKED_BACK = 3;
 
@@ -43,6 +45,7 @@ export class RetentionService {
       await this.dropOldEpochs();
       if (!this.settings.get().keepPositionsOffShift) await this.dropPositionsOffShift();
       this.dropEndedSignIns();
+      this.dropOldTaps();
     } catch (error) {
       this.logger.error({ err: error }, 'retention stopped; the next hour goes on');
     }
@@ -118,6 +121,14 @@ export class RetentionService {
         .run();
       await this.pause();
     }
+  }
+
+  /** A phone that has not sent again in this time will not. */
+  private dropOldTaps(): void {
+    this.database
+      .delete(taps)
+      .where(lt(taps.at, this.clock.now() - TAPS_KEPT_MS))
+      .run();
   }
 
   private dropEndedSignIns(): void {

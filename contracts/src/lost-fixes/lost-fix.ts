@@ -129,6 +129,7 @@ export const photo = z.object({
   height: z.number().int(),
 });
 export type Photo = z.infer<typeof photo>;
+export const photoList = z.array(photo);
 
 export const nearMountPoint = z.object({
   mountPoint: z.string(),
@@ -141,7 +142,7 @@ export type NearMountPoint = z.infer<typeof nearMountPoint>;
 
 export const lostFixDetail = lostFix.extend({
   history: z.array(historyEntry),
-  photoList: z.array(photo),
+  photoList,
   memberList: z.array(lostFix),
   nearest: z.array(nearMountPoint),
 });

@@ -3,12 +3,14 @@ import type { ViewerRole } from '@hubtack/contracts/auth/role.js';
 interface PageEntry {
   path: string;
   name: string;
-  /** A manager sees every page. */
+  /** A manager sees every page but the chief's own. */
   roles: readonly ViewerRole[];
 }
 
 const pages: readonly PageEntry[] = [
+  { path: '/my-crew', name: 'My crew', roles: ['crewChief'] },
   { path: '/', name: 'Board', roles: ['dispatcher', 'technician', 'crewChief'] },
+  { path: '/lost-fixes', name: 'Lost fixes', roles: ['dispatcher', 'technician'] },
   { path: '/crews', name: 'Crews', roles: ['dispatcher', 'technician'] },
   { path: '/rovers', name: 'Rovers', roles: ['dispatcher', 'technician'] },
   { path: '/corrections', name: 'Corrections', roles: ['dispatcher', 'technician'] },
@@ -19,4 +21,4 @@ const pages: readonly PageEntry[] = [
 ];
 
 export const pagesFor = (role: ViewerRole): readonly PageEntry[] =>
-  pages.filter((page) => role === 'manager' || page.roles.includes(role));
+  pages.filter(({ path, roles }) => roles.includes(role) || (role === 'manager' && path !== '/my-crew'));

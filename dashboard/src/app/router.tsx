@@ -1,6 +1,7 @@
 import { lazy, Suspense, type ComponentType } from 'react';
 import { createBrowserRouter, Navigate } from 'react-router-dom';
 import { Loading } from '../components/query-states';
+import { Landing } from './landing';
 import { RequireSignIn } from './require-sign-in';
 import { Shell } from './shell';
 
@@ -26,7 +27,11 @@ export const router = createBrowserRouter([
       </RequireSignIn>
     ),
     children: [
-      { path: '/', element: page(() => import('../features/board/board-page')) },
+      { path: '/', element: <Landing>{page(() => import('../features/board/board-page'))}</Landing> },
+      { path: '/my-crew', element: page(() => import('../features/my-crew/my-crew-page')) },
+      { path: '/lost-fixes', element: page(() => import('../features/lost-fixes/lost-fixes-page')) },
+      { path: '/lost-fixes/:id', element: page(() => import('../features/lost-fixes/lost-fix-page')) },
+      { path: '/notices', element: page(() => import('../features/notices/notices-page')) },
       { path: '/crews', element: page(() => import('../features/crews/crews-page')) },
       { path: '/sites', element: page(() => import('../features/sites/sites-page')) },
       { path: '/rovers', element: page(() => import('../features/rovers/rovers-page')) },

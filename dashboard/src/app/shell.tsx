@@ -1,13 +1,16 @@
-import { Suspense } from 'react';
+import { lazy, Suspense } from 'react';
 import { NavLink, Outlet, useLocation } from 'react-router-dom';
 import { ErrorBoundary } from '../components/error-boundary';
 import { Loading } from '../components/query-states';
+import { LostFixCount } from '../live/lost-fix-count';
 import { StreamState } from '../live/stream-state';
 import { useMe } from '../lib/session';
 import { FirmClock } from './firm-clock';
 import { pagesFor } from './pages';
 import { UserMenu } from './user-menu';
 import './shell.css';
+
+const NoticeBell = lazy(() => import('../features/notices/notice-bell'));
 
 /** Header with the ways to go, and the page. */
 export function Shell() {
@@ -27,12 +30,16 @@ export function Shell() {
           {pagesFor(me.role).map(({ path, name }) => (
             <NavLink key={path} to={path} end={path === '/'}>
               {name}
+              {path === '/lost-fixes' && <LostFixCount />}
             </NavLink>
           ))}
         </nav>
         <div className="shell-state">
           <StreamState />
           <FirmClock />
+          <Suspense fallback={null}>
+            <NoticeBell />
+          </Suspense>
           <UserMenu />
         </div>
       </header>

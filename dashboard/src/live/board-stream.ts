@@ -1,6 +1,16 @@
-import { lanesEvent, resetEvent, type LanesEvent } from '@hubtack/contracts/stream/events.js';
+import {
+  lanesEvent,
+  lostFixEvent,
+  noticeEvent,
+  resetEvent,
+  type LanesEvent,
+  type LostFixEvent,
+} from '@hubtack/contracts/stream/events.js';
 import type { QueryClient } from '@tanstack/react-query';
 import { refreshSignIn } from '../lib/api';
+import { crewDayKey } from '../lib/crew-day';
+import { landLostFixes } from '../lib/lost-fixes';
+import { landNotice, noticesQuery } from '../lib/notices';
 import { meQuery } from '../lib/session';
 import { Batcher } from './batcher';
 import { boardQuery } from './board-query';
@@ -23,7 +33,7 @@ export class BoardStream {
   private waitMs = FIRST_WAIT_MS;
   private timer: ReturnType<typeof setTimeout> | null = null;
   private readonly listeners = new Set<() => void>();
-  private readonly batcher = new Batcher<LanesEvent>(BATCH_MS, (events) => this.land(events));
+  private readonly batcher = new Batcher<LanesEvent | LostFixEvent>(BATCH_MS, (events) => this.land(events));
 
   constructor(private readonly client: QueryClient) {}
 
@@ -57,6 +67,21 @@ export class BoardStream {
       if (event.success) this.batcher.push(event.data);
       // A server newer than this page: its snapshot is read anew, and says so if that cannot be read either.
       else void this.start();
+    });
+    source.addEventListener('lost-fix', (message: MessageEvent<string>) => {
+      this.heard(message);
+      const event = lostFixEvent.safeParse(JSON.parse(message.data));
+      if (event.success) this.batcher.push(event.data);
+      else void this.start();
+    });
+    source.addEventListener('notice', (message: MessageEvent<string>) => {
+      this.heard(message);
+      const event = noticeEvent.safeParse(JSON.parse(message.data));
+      if (event.success) landNotice(this.client, event.data);
+    });
+    // Notices are no part of what is resumed: those told meanwhile are fetched.
+    source.addEventListener('open', () => {
+      void this.client.invalidateQueries({ queryKey: noticesQuery.queryKey });
     });
     source.addEventListener('beat', () => this.heard(null));
     source.addEventListener('reset', (message: MessageEvent<string>) => {
@@ -99,7 +124,12 @@ export class BoardStream {
     this.connect();
   }
 
-  private land(events: LanesEvent[]): void {
+  private land(events: (LanesEvent | LostFixEvent)[]): void {
+    const lostFixes = events.flatMap((event) => ('lostFixes' in event ? event.lostFixes : []));
+    if (lostFixes.length > 0) {
+      landLostFixes(this.client, lostFixes);
+      void this.client.invalidateQueries({ queryKey: crewDayKey });
+    }
     this.client.setQueryData(boardQuery.queryKey, (board) => {
       if (!board) return board;
       return { ...applyEvents(board, events, Date.now()), cursor: this.cursor ?? board.cursor };

@@ -1,6 +1,7 @@
 import { wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { makeLane } from '../testing/make-lane';
+import { makeLostFix } from '../testing/make-lost-fix';
 import { Batcher } from './batcher';
 import { applyEvents, boardStateOf } from './board-state';
 import { stateNow, totalsNow } from './lane-figures';
@@ -11,7 +12,12 @@ const { ribbon: _ribbon, ...change } = makeLane({ id: 1, state: 'float', since: 
 
 describe('events on the board', () => {
   const before = boardStateOf(
-    { cursor: 'x.1', serverTime: 4000, lanes: [makeLane({ id: 1 }), makeLane({ id: 2 })] },
+    {
+      cursor: 'x.1',
+      serverTime: 4000,
+      lanes: [makeLane({ id: 1 }), makeLane({ id: 2 })],
+      lostFixes: [makeLostFix({ id: 5 })],
+    },
     1000,
   );
 
@@ -40,6 +46,21 @@ describe('events on the board', () => {
     );
     expect([...after.lanes.keys()]).toEqual([1, 3]);
     expect(after.clockOffsetMs).toBe(4000);
+  });
+});
+
+describe('lost fixes on the board', () => {
+  const before = boardStateOf(
+    { cursor: 'x.1', serverTime: 0, lanes: [], lostFixes: [makeLostFix({ id: 5 })] },
+    0,
+  );
+  const after = (change: Partial<Parameters<typeof makeLostFix>[0]>) => [
+    ...applyEvents(before, [{ serverTime: 0, lostFixes: [makeLostFix(change)] }], 0).lostFixes.keys(),
+  ];
+  it('come, and go when they have ended or are closed', () => {
+    expect(after({ id: 6 })).toEqual([5, 6]);
+    expect(after({ id: 5, endAt: 9 })).toEqual([]);
+    expect(after({ id: 5, closed: { at: 9, by: 'x', cause: 'planned', note: null } })).toEqual([]);
   });
 });
 

@@ -1,7 +1,9 @@
 import type { Lane } from '@hubtack/contracts/board/lane.js';
+import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { useQuery } from '@tanstack/react-query';
 import { useCallback } from 'react';
 import { boardQuery, type LiveBoard } from './board-query';
+import { lostFixOfRover } from './lost-fix-of-rover';
 import { useNow } from './use-now';
 
 /** One lane; the component is drawn again only when this lane changes. */
@@ -12,6 +14,21 @@ export function useLane(id: number): Lane | undefined {
 
 const allLanes = (board: LiveBoard) => board.lanes;
 export const useLanes = () => useQuery({ ...boardQuery, select: allLanes });
+
+const allLostFixes = (board: LiveBoard) => board.lostFixes;
+const none: LiveBoard['lostFixes'] = new Map();
+/** Lost fixes that have not ended and are not closed. */
+export const useOpenLostFixes = (): LiveBoard['lostFixes'] =>
+  useQuery({ ...boardQuery, select: allLostFixes }).data ?? none;
+
+/** The open lost fix of a rover: one that a person has flagged before all others, else the newest. */
+export function useLostFixOf(roverId: number): LostFix | undefined {
+  const select = useCallback(
+    (board: LiveBoard) => lostFixOfRover(board.lostFixes.values(), roverId),
+    [roverId],
+  );
+  return useQuery({ ...boardQuery, select }).data;
+}
 
 const offset = (board: LiveBoard) => Math.round(board.clockOffsetMs / 1000) * 1000;
 /** The server's "now" as this page reckons it, one second at a time. Its clock is the one that counts. */

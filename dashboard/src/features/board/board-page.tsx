@@ -2,7 +2,7 @@ import { Button, SearchBox } from '@fluentui/react-components';
 import { lazy, Suspense, useCallback, useMemo, useRef, useState } from 'react';
 import { ErrorBoundary } from '../../components/error-boundary';
 import { Empty, Failed, Loading } from '../../components/query-states';
-import { useLanes, useServerNow } from '../../live/use-lanes';
+import { useLanes, useOpenLostFixes, useServerNow } from '../../live/use-lanes';
 import { useMe } from '../../lib/session';
 import { Announcer } from './announcer';
 import { BoardKeys } from './board-keys';
@@ -20,6 +20,7 @@ export default function BoardPage() {
   const { data: board, error, refetch } = useLanes();
   const me = useMe();
   const now = useServerNow();
+  const lostFixes = useOpenLostFixes();
   const [filter, setFilter] = useState<BoardFilter>(noFilter);
   const [openId, setOpenId] = useState<number | null>(null);
   const [view, setView] = useState<'list' | 'plan'>('list');
@@ -32,7 +33,7 @@ export default function BoardPage() {
   }, []);
   const lanes = useMemo(() => [...(board?.values() ?? [])], [board]);
   const shown = useMemo(() => lanes.filter((lane) => fitsFilter(lane, filter, now)), [lanes, filter, now]);
-  const order = useCalmOrder(shown, now, isHeld);
+  const order = useCalmOrder(shown, lostFixes, now, isHeld);
   const open = useCallback((id: number) => setOpenId((before) => (before === id ? null : id)), []);
 
   if (!board && error) return <Failed error={error} retry={() => void refetch()} />;

@@ -1,6 +1,8 @@
 import { describe, expect, it } from 'vitest';
 import { makeLane } from '../../testing/make-lane';
+import { makeLostFix } from '../../testing/make-lost-fix';
 import { fitsFilter, noFilter } from './filter';
+import { withBlocks } from './blocks';
 import { inOrderOfNeed, needOf } from './need';
 import { planScale, scaleBarMetres } from './plan-scale';
 
@@ -20,11 +22,16 @@ const unstable = makeLane({
   })),
 });
 const well = makeLane({ id: 1 });
+const noLostFixes = new Map();
 const onBreak = makeLane({ id: 7, crewName: 'Aspen', state: 'silent', duty: 'paused' });
 
 describe('order of need', () => {
   it('lost before no first fix, quiet, unstable, well; off shift last; the longest first', () => {
-    const order = inOrderOfNeed([onBreak, well, unstable, silent, noFirstFix, lost, longLost], NOW);
+    const order = inOrderOfNeed(
+      [onBreak, well, unstable, silent, noFirstFix, lost, longLost],
+      noLostFixes,
+      NOW,
+    );
     expect(order.map(({ crewName }) => crewName)).toEqual([
       'Banksia',
       'Dogwood',
@@ -34,6 +41,25 @@ describe('order of need', () => {
       'Alder',
       'Aspen',
     ]);
+  });
+  it('what a person has flagged comes first, also while the receiver says fixed', () => {
+    const flag = { at: 1, word: 'fixLooksWrong' as const, note: null, by: 'Chief' };
+    const flagged = new Map([[9, makeLostFix({ id: 9, kind: 'flag', roverId: well.id, flag })]]);
+    expect(inOrderOfNeed([lost, well], flagged, NOW)[0]).toBe(well);
+  });
+  it('those under a mount point\u2019s lost fix stand together under it', () => {
+    const shared = makeLostFix({ id: 20, kind: 'mountPoint', roverId: null, mountPoint: 'TANF00' });
+    const member = (id: number, roverId: number) => [id, makeLostFix({ id, roverId, sharedId: 20 })] as const;
+    const lostFixes = new Map([[20, shared], member(21, 2), member(22, 4)]);
+    expect(withBlocks([3, 2, 5, 4, 1], lostFixes)).toEqual([
+      { kind: 'lane', id: 3 },
+      { kind: 'block', id: 20 },
+      { kind: 'lane', id: 2 },
+      { kind: 'lane', id: 4 },
+      { kind: 'lane', id: 5 },
+      { kind: 'lane', id: 1 },
+    ]);
+    expect(withBlocks([3], new Map([[20, shared]]))[0]).toEqual({ kind: 'block', id: 20 });
   });
   it('a break and a rover in the store alarm nobody', () => {
     expect(needOf(onBreak, NOW).need).toBe('offShift');

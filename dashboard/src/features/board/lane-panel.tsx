@@ -1,8 +1,9 @@
 import { wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { Button } from '@fluentui/react-components';
 import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
-import { useEffect, useRef, type ReactNode } from 'react';
+import { useEffect, useRef, useState, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
+import EpochCharts from '../../components/epoch-charts';
 import { SpanRibbon } from '../../components/span-ribbon';
 import { StateGlyph } from '../../components/state-glyph';
 import { stateNow, totalsNow } from '../../live/lane-figures';
@@ -10,7 +11,6 @@ import { useLane, useServerNow } from '../../live/use-lanes';
 import { age, clockTimeSeconds, distance, duration, utc } from '../../lib/format';
 import { percent } from '../../lib/percent';
 import { useMe } from '../../lib/session';
-import EpochCharts from './epoch-charts';
 import './lane-panel.css';
 
 const HOUR_MS = 3_600_000;
@@ -31,6 +31,7 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
   useEffect(() => {
     if (heading.current?.dataset.lane === String(id)) heading.current.focus();
   }, [id]);
+  const [from] = useState(() => now - 2 * HOUR_MS);
   if (!lane) return null;
   const { state, since } = stateNow(lane, now);
   const totals = totalsNow(lane, now);
@@ -87,7 +88,7 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
           )}
         </Figure>
       </dl>
-      <EpochCharts roverId={id} zone={timeZone} />
+      <EpochCharts roverId={id} from={from} to={null} zone={timeZone} />
       {role !== 'crewChief' && <Link to={`/rovers/${id}`}>Rover, keys and assignments</Link>}
     </aside>
   );

@@ -5,10 +5,11 @@ import { memo } from 'react';
 import { SpanRibbon } from '../../components/span-ribbon';
 import { StateGlyph } from '../../components/state-glyph';
 import { stateNow, totalsNow } from '../../live/lane-figures';
-import { useLane, useServerNow } from '../../live/use-lanes';
+import { useLane, useLostFixOf, useServerNow } from '../../live/use-lanes';
 import { age, clockTime, distance, duration, utc } from '../../lib/format';
 import { percent } from '../../lib/percent';
 import { useMe } from '../../lib/session';
+import { LostFixNote } from './lost-fix-note';
 import { CALL_AFTER_MS, needOf } from './need';
 
 const HOUR_MS = 3_600_000;
@@ -32,9 +33,10 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
   const lane = useLane(id);
   const now = useServerNow();
   const me = useMe();
+  const lostFix = useLostFixOf(id);
   if (!lane) return null;
   const { state, since } = stateNow(lane, now);
-  const { need } = needOf(lane, now);
+  const { need } = needOf(lane, now, lostFix);
   const totals = totalsNow(lane, now);
   const to = Math.ceil(now / RIBBON_STEP_MS) * RIBBON_STEP_MS;
   const isHeard = state !== 'silent';
@@ -80,7 +82,15 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
           zone={me.timeZone}
           label={`Last hour of ${name}`}
         />
-        <LaneNote lane={lane} now={now} />
+        {lostFix ? (
+          <LostFixNote
+            lostFix={lostFix}
+            canAct={onOpen !== null && me.role !== 'crewChief'}
+            zone={me.timeZone}
+          />
+        ) : (
+          <LaneNote lane={lane} now={now} />
+        )}
       </span>
       <span className="lane-figure" role="cell" data-name="Satellites">
         {(isHeard ? lane.satellites : null) ?? '–'}

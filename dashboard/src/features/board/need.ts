@@ -1,8 +1,10 @@
 import type { Lane } from '@hubtack/contracts/board/lane.js';
+import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
+import { lostFixOfRover } from '../../live/lost-fix-of-rover';
 import { stateNow } from '../../live/lane-figures';
 
 /** How much somebody in the office is needed, the most first (design: "The board"). */
-export const needs = ['lost', 'noFirstFix', 'quiet', 'unstable', 'well', 'offShift'] as const;
+export const needs = ['flagged', 'lost', 'noFirstFix', 'quiet', 'unstable', 'well', 'offShift'] as const;
 export type Need = (typeof needs)[number];
 
 const UNSTABLE_CHANGES = 3;
@@ -18,7 +20,8 @@ export interface NeedOfLane {
   since: number | null;
 }
 
-export function needOf(lane: Lane, now: number): NeedOfLane {
+export function needOf(lane: Lane, now: number, lostFix?: LostFix): NeedOfLane {
+  if (lostFix?.flag) return { need: 'flagged', since: lostFix.flag.at };
   const { state, since } = stateNow(lane, now);
   const isAway =
     lane.duty === 'noShiftSet' && state === 'silent' && (since === null || now - since > AWAY_MS);
@@ -30,8 +33,15 @@ export function needOf(lane: Lane, now: number): NeedOfLane {
 }
 
 /** Lanes by need, within those the longest first; crews that are well stand by name, so that the eye finds them. */
-export function inOrderOfNeed(lanes: Iterable<Lane>, now: number): Lane[] {
-  const ranked = [...lanes].map((lane) => ({ lane, ...needOf(lane, now) }));
+export function inOrderOfNeed(
+  lanes: Iterable<Lane>,
+  lostFixes: ReadonlyMap<number, LostFix>,
+  now: number,
+): Lane[] {
+  const ranked = [...lanes].map((lane) => ({
+    lane,
+    ...needOf(lane, now, lostFixOfRover(lostFixes.values(), lane.id)),
+  }));
   const name = (lane: Lane) => `${lane.crewName ?? '\uffff'} ${lane.roverLabel}`;
   ranked.sort((a, b) => {
     const byNeed = needs.indexOf(a.need) - needs.indexOf(b.need);

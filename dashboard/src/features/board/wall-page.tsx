@@ -5,7 +5,7 @@ import { Navigate } from 'react-router-dom';
 import { Failed, Loading } from '../../components/query-states';
 import { LiveProvider } from '../../live/live-context';
 import { StreamState } from '../../live/stream-state';
-import { useLanes, useServerNow } from '../../live/use-lanes';
+import { useLanes, useOpenLostFixes, useServerNow } from '../../live/use-lanes';
 import { clockTime, zoneName } from '../../lib/format';
 import { meQuery, useMe, useSigningIn } from '../../lib/session';
 import { isOnShift } from './filter';
@@ -21,9 +21,10 @@ function Wall() {
   const { data: board, error, refetch } = useLanes();
   const { firmName, timeZone } = useMe();
   const now = useServerNow();
+  const lostFixes = useOpenLostFixes();
   const lanes = useMemo(() => [...(board?.values() ?? [])], [board]);
   const onShift = useMemo(() => lanes.filter((lane) => isOnShift(lane, now)), [lanes, now]);
-  const order = useCalmOrder(onShift, now, neverHeld);
+  const order = useCalmOrder(onShift, lostFixes, now, neverHeld);
   if (!board && error) return <Failed error={error} retry={() => void refetch()} />;
   if (!board) return <Loading what="the board" />;
   return (

@@ -9,9 +9,10 @@ import {
   XAxis,
   YAxis,
 } from 'recharts';
-import { Empty, Failed, Loading } from '../../components/query-states';
-import { clockTime, clockTimeSeconds } from '../../lib/format';
-import { epochsQuery } from './epochs-query';
+import { clockTime, clockTimeSeconds } from '../lib/format';
+import { epochsQuery } from '../lib/epochs';
+import { Empty, Failed, Loading } from './query-states';
+import './epoch-charts.css';
 
 const CHART_PX = 150;
 /** Between points further apart than this nothing was heard: the line breaks. */
@@ -21,6 +22,7 @@ interface Point {
   at: number;
   satellites: number | null;
   ageSeconds: number | null;
+  hdop: number | null;
 }
 
 /** Breaks lines where the rover was silent, so that nothing is drawn that nobody measured. */
@@ -28,19 +30,21 @@ function withGaps(points: readonly Point[]): Point[] {
   return points.flatMap((point, index) => {
     const before = points[index - 1];
     if (!before || point.at - before.at < GAP_MS) return [point];
-    return [{ at: before.at + 1, satellites: null, ageSeconds: null }, point];
+    return [{ at: before.at + 1, satellites: null, ageSeconds: null, hdop: null }, point];
   });
 }
 
 interface ChartProps {
   title: string;
   points: Point[];
-  of: 'satellites' | 'ageSeconds';
+  of: 'satellites' | 'ageSeconds' | 'hdop';
   zone: string;
   limit?: { at: number; words: string };
+  /** Where the fix was lost. */
+  mark: number | undefined;
 }
 
-function Chart({ title, points, of, zone, limit }: ChartProps) {
+function Chart({ title, points, of, zone, limit, mark }: ChartProps) {
   const values = points.map((point) => point[of]).filter((value) => value !== null);
   const words =
     values.length === 0
@@ -83,6 +87,7 @@ function Chart({ title, points, of, zone, limit }: ChartProps) {
                 ifOverflow="extendDomain"
               />
             )}
+            {mark !== undefined && <ReferenceLine x={mark} stroke="var(--ink)" />}
             <Tooltip
               labelFormatter={(at) => clockTimeSeconds(Number(at), zone)}
               formatter={(value) => [Number(value).toFixed(1), title]}
@@ -103,20 +108,37 @@ function Chart({ title, points, of, zone, limit }: ChartProps) {
   );
 }
 
-/** Age of corrections and satellites of the last two hours, one over the other: which fell first tells the cause. */
-export default function EpochCharts({ roverId, zone }: { roverId: number; zone: string }) {
-  const { data, error, refetch } = useQuery(epochsQuery(roverId));
+interface EpochChartsProps {
+  roverId: number;
+  from: number;
+  /** Null: to now, and on. */
+  to: number | null;
+  zone: string;
+  /** Drawn as a line: where the fix was lost. */
+  mark?: number;
+  maxAgeSeconds?: number;
+  withHdop?: boolean;
+}
+
+/** Age of corrections over satellites (and HDOP): which of them changed first tells the cause. */
+export default function EpochCharts(props: EpochChartsProps) {
+  const { roverId, from, to, zone, mark, maxAgeSeconds = 10, withHdop = false } = props;
+  const { data, error, refetch } = useQuery(epochsQuery(roverId, from, to));
   if (error && !data) return <Failed error={error} retry={() => void refetch()} />;
-  if (!data) return <Loading what="the last two hours" />;
+  if (!data) return <Loading what="the charts" />;
   if (data.points.length === 0)
-    return <Empty title="Nothing heard in the last two hours">Charts need epochs.</Empty>;
+    return (
+      <Empty title="Nothing heard in this time">Charts need epochs; raw ones are kept for some weeks.</Empty>
+    );
   const points = withGaps(
-    data.points.map(({ at, satellites, ageMs }) => ({
+    data.points.map(({ at, satellites, ageMs, hdop }) => ({
       at,
       satellites,
+      hdop,
       ageSeconds: ageMs === null ? null : ageMs / 1000,
     })),
   );
+  const limit = { at: maxAgeSeconds, words: `${maxAgeSeconds} s` };
   return (
     <>
       <Chart
@@ -124,9 +146,11 @@ export default function EpochCharts({ roverId, zone }: { roverId: number; zone: 
         points={points}
         of="ageSeconds"
         zone={zone}
-        limit={{ at: 10, words: '10 s' }}
+        limit={limit}
+        mark={mark}
       />
-      <Chart title="Satellites" points={points} of="satellites" zone={zone} />
+      <Chart title="Satellites" points={points} of="satellites" zone={zone} mark={mark} />
+      {withHdop && <Chart title="HDOP" points={points} of="hdop" zone={zone} mark={mark} />}
     </>
   );
 }

@@ -1,0 +1,2 @@
+/** All days of crews begin with this key. */
+export const crewDayKey = ['crewDay'] as const;

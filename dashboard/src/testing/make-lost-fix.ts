@@ -1,0 +1,32 @@
+import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
+
+/** An open lost fix; a test says only what matters. */
+export const makeLostFix = (change: Partial<LostFix> = {}): LostFix => ({
+  id: 1,
+  kind: 'lostFix',
+  status: 'open',
+  roverId: 1,
+  roverLabel: 'R-01',
+  crewId: 1,
+  crewName: 'Alder',
+  crewPhone: null,
+  siteName: 'Tannery Flats',
+  mountPoint: 'TANF00',
+  startAt: 100_000,
+  raisedAt: 130_000,
+  endAt: null,
+  ending: null,
+  pausedMs: 0,
+  sharedId: null,
+  members: 0,
+  flag: null,
+  taken: null,
+  advice: null,
+  shelved: null,
+  diagnosis: null,
+  diagnosisAtRaising: null,
+  isChattering: false,
+  photos: 0,
+  closed: null,
+  ...change,
+});
