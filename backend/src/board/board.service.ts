@@ -56,9 +56,10 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
       if (change.kind === 'sessions') this.hub.endSessions(change.sessionIds);
       if (change.kind === 'lostFix') this.moveLostFixes(change.lostFixIds);
     });
-    this.notices.told.subscribe(({ userId, notice }) =>
-      this.hub.tell(userId, eventText('notice', notice), this.clock.now()),
-    );
+    this.notices.told.subscribe(({ userId, notice }) => {
+      const isForMailOnly = notice.ways.every((way) => way === 'mail');
+      if (!isForMailOnly) this.hub.tell(userId, eventText('notice', notice), this.clock.now());
+    });
     this.sweepTimer = setInterval(() => this.sweep(), SWEEP_MS);
   }
 

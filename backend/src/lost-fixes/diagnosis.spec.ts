@@ -27,7 +27,7 @@ const lost = (since: (second: number) => Partial<EvidenceEpoch>, more: Partial<E
   now: START + 60 * S,
   before: epochs(-120, 0),
   since: epochs(0, 60, since),
-  hadCorrections: true,
+  correctedAt: START - 600 * S,
   baseDistanceM: 8400,
   outage: null,
   ...more,
@@ -105,7 +105,7 @@ describe('the likely cause', () => {
   it('never corrected: no float or fixed and no station since the shift began', () => {
     const plain = { quality: 1, ageMs: null, stationId: null };
     const noFirstFix = (more: Partial<Evidence> = {}) =>
-      lost(() => plain, { kind: 'noFirstFix', before: [], hadCorrections: false, ...more });
+      lost(() => plain, { kind: 'noFirstFix', before: [], correctedAt: null, ...more });
     expect(verdict(noFirstFix())).toEqual({
       cause: 'neverCorrected',
       evidence: ['no corrections since the shift began: quality 1, no base station id', '22 satellites'],
@@ -119,12 +119,28 @@ describe('the likely cause', () => {
       runnerUp: 'skyBlocked',
     });
   });
+  it('never corrected: stays so in the minute in which corrections come at last', () => {
+    const since = [
+      ...epochs(0, 300, () => ({ quality: 1, ageMs: null, stationId: null })),
+      ...epochs(300, 308, () => float),
+    ];
+    const atLast = (seconds: number) =>
+      lost(() => ({}), {
+        kind: 'noFirstFix',
+        before: [],
+        since,
+        correctedAt: START + 300 * S,
+        now: START + seconds * S,
+      });
+    expect(verdict(atLast(308)).cause).toBe('neverCorrected');
+    expect(verdict(atLast(361)).cause).not.toBe('neverCorrected');
+  });
   it('not heard: nothing in the shift', () => {
     const evidence = lost(() => ({}), {
       kind: 'notHeard',
       before: [],
       since: [],
-      hadCorrections: false,
+      correctedAt: null,
       now: START + 660 * S,
     });
     expect(verdict(evidence)).toEqual({

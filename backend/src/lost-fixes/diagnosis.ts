@@ -14,8 +14,8 @@ export interface Evidence {
   /** The two minutes before the loss, and everything since (of a long loss its beginning and its newest part), sorted. */
   before: readonly EvidenceEpoch[];
   since: readonly EvidenceEpoch[];
-  /** Whether corrections came at any time since the shift began: a quality of 4 or 5, or a base station id. */
-  hadCorrections: boolean;
+  /** When corrections first came since the shift began (a quality of 4 or 5, or a base station id); null when they never did. */
+  correctedAt: number | null;
   /** Distance to the base, metres; null when one of the two is not known. */
   baseDistanceM: number | null;
   /** The mount point has failed for everyone on it: how many rovers of how many. */
@@ -31,6 +31,11 @@ export interface Verdict {
 }
 
 type Rule = (evidence: Evidence, figures: Figures, limits: Limits) => string[] | null;
+
+/** Corrections that have come this short a time ago are the end of their absence. */
+const JUST_CAME_MS = 60_000;
+const hadCorrections = ({ correctedAt, now }: Evidence): boolean =>
+  correctedAt !== null && now - correctedAt > JUST_CAME_MS;
 
 const seconds = (ms: number): string => `${Math.round(ms / 1000)} s`;
 const kilometres = (metres: number): string => `${(metres / 1000).toFixed(1)} km`;
@@ -83,15 +88,15 @@ const rules: Record<Cause, Rule> = {
     kind === 'notHeard'
       ? [`nothing heard since the shift began ${Math.floor((now - start) / 60_000)} min ago`]
       : null,
-  neverCorrected: ({ hadCorrections, since }, figures) =>
-    !hadCorrections && since.length > 0 && figures.noneShare < MOST
+  neverCorrected: (evidence, figures) =>
+    !hadCorrections(evidence) && evidence.since.length > 0 && figures.noneShare < MOST
       ? [
           `no corrections since the shift began: quality ${figures.usualQuality}, no base station id`,
           ...[satellites(figures)].filter((line) => line !== null),
         ]
       : null,
-  correctionsStopped: ({ hadCorrections }, figures, limits) => {
-    if (!hadCorrections || !figures.areCorrectionsLost) return null;
+  correctionsStopped: (evidence, figures, limits) => {
+    if (!hadCorrections(evidence) || !figures.areCorrectionsLost) return null;
     return figures.oldestAgeMs === null
       ? ['the age of corrections is no longer reported']
       : [
@@ -103,10 +108,9 @@ const rules: Record<Cause, Rule> = {
       ? [`quality 0 in ${Math.round(figures.noneShare * 100)} % of the epochs since the loss`]
       : null,
   skyBlocked: skyIsBlocked,
-  farFromBase: ({ baseDistanceM, hadCorrections }, figures, limits) =>
+  farFromBase: ({ baseDistanceM }, figures, limits) =>
     baseDistanceM !== null &&
     baseDistanceM > limits.maxBaselineKm * 1000 &&
-    hadCorrections &&
     !figures.areCorrectionsLost &&
     figures.floatShare > 0
       ? [`${kilometres(baseDistanceM)} to the base (limit ${limits.maxBaselineKm} km)`, ageIsGood(figures)]

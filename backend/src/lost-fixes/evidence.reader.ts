@@ -17,8 +17,8 @@ interface Base {
 /** Gathers what is known about a loss from the stored epochs. */
 @Injectable()
 export class EvidenceReader {
-  /** For each rover's shift: up to where its epochs have been looked through, and whether corrections had come. */
-  private readonly looked = new Map<number, { shiftStart: number; until: number; had: boolean }>();
+  /** For each rover's shift: up to where its epochs have been looked through, and when corrections first came. */
+  private readonly looked = new Map<number, { shiftStart: number; until: number; at: number | null }>();
 
   constructor(private readonly fixes: FixesService) {}
 
@@ -40,7 +40,7 @@ export class EvidenceReader {
       now: until,
       before,
       since: this.since(roverId, start, until),
-      hadCorrections: this.hadCorrections(roverId, shiftStart, until),
+      correctedAt: this.correctedAt(roverId, shiftStart, until),
       baseDistanceM: this.distance(roverId, base),
       outage,
     };
@@ -55,15 +55,16 @@ export class EvidenceReader {
   }
 
   /** Goes through the epochs of a shift once; what has been looked through is not looked at again. */
-  private hadCorrections(roverId: number, shiftStart: number, until: number): boolean {
+  private correctedAt(roverId: number, shiftStart: number, until: number): number | null {
     const known = this.looked.get(roverId);
-    const goesOn = known?.shiftStart === shiftStart ? known : { shiftStart, until: shiftStart, had: false };
-    if (goesOn.had || until <= goesOn.until) return goesOn.had;
-    const had = this.fixes
+    const goesOn = known?.shiftStart === shiftStart ? known : { shiftStart, until: shiftStart, at: null };
+    if (goesOn.at !== null || until <= goesOn.until) return goesOn.at;
+    const first = this.fixes
       .epochs(roverId, goesOn.until, until)
-      .some(({ quality, stationId }) => quality === 4 || quality === 5 || stationId !== null);
-    this.looked.set(roverId, { shiftStart, until, had });
-    return had;
+      .find(({ quality, stationId }) => quality === 4 || quality === 5 || stationId !== null);
+    const at = first?.time ?? null;
+    this.looked.set(roverId, { shiftStart, until, at });
+    return at;
   }
 
   private distance(roverId: number, { baseLatitude, baseLongitude }: Base): number | null {

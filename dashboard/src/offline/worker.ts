@@ -32,7 +32,12 @@ class Worker {
   readonly keep = (paths: readonly string[]): void => {
     this.kept = paths;
     if (!import.meta.env.PROD || !navigator.serviceWorker?.controller) return;
-    for (const path of paths) fetch(path, { credentials: 'same-origin' }).catch(() => undefined);
+    for (const path of paths) {
+      // Read to its end: a body left lying keeps the worker busy, and a newer one from coming.
+      fetch(path, { credentials: 'same-origin' })
+        .then((answer) => answer.arrayBuffer())
+        .catch(() => undefined);
+    }
   };
 
   private async register(): Promise<void> {

@@ -1,8 +1,9 @@
 import { writeGga, writeGst, writeRmc } from '@hubtack/contracts/nmea/sentence-writer.js';
 import { uniformInt } from 'pure-rand/distribution/uniformInt';
-import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
 import type { RandomGenerator } from 'pure-rand/types/RandomGenerator';
-import { chance, type Behaviour, type RoverState } from '../scenarios/behaviour.js';
+import type { Behaviour } from '../scenarios/behaviour.js';
+import { chance, randomOf } from '../scenarios/random.js';
+import { stateAt } from '../scenarios/simulated-epoch.js';
 
 const METRES_A_DEGREE = 111_320;
 /** A crew walks from point to point: metres a second, and how far from the middle of its site. */
@@ -10,15 +11,6 @@ const WALK_M = 0.7;
 const SITE_RADIUS_M = 120;
 /** Scatter of a position by quality, metres. */
 const scatterM: Record<number, number> = { 4: 0.008, 5: 0.35, 2: 0.9, 1: 2.5 };
-
-const nothing: RoverState = {
-  quality: 0,
-  satellites: 0,
-  hdop: 99.9,
-  ageSeconds: null,
-  stationId: null,
-  quiet: false,
-};
 
 /** A rover on its site, a second at a time. The same seed gives the same sentences. */
 export class SimulatedRover {
@@ -32,13 +24,13 @@ export class SimulatedRover {
     private readonly behaviours: readonly Behaviour[],
     seed: number,
   ) {
-    this.random = xoroshiro128plus(seed);
+    this.random = randomOf(seed);
     this.heading = uniformInt(this.random, 0, 359);
   }
 
   /** Sentences of the instant `time` (ms UTC), `seconds` after the start; empty when it sends nothing. */
   sentencesAt(time: number, seconds: number): string {
-    const state = this.behaviours.reduce((before, behave) => behave(before, seconds, this.random), nothing);
+    const state = stateAt(this.behaviours, seconds, this.random);
     this.walk();
     if (state.quiet) return '';
     const noise = scatterM[state.quality] ?? 0;

@@ -1,5 +1,5 @@
-import { uniformInt } from 'pure-rand/distribution/uniformInt';
 import type { RandomGenerator } from 'pure-rand/types/RandomGenerator';
+import { chance } from './random.js';
 
 /** What a rover would report at one instant. */
 export interface RoverState {
@@ -15,9 +15,6 @@ export interface RoverState {
 
 /** One fault, or ordinary life: changes what a rover reports. Behaviours are put in a row and each sees the one before. */
 export type Behaviour = (state: RoverState, seconds: number, random: RandomGenerator) => RoverState;
-
-/** A number in [0, 1), from the seeded generator. */
-export const chance = (random: RandomGenerator): number => uniformInt(random, 0, 0xff_ffff) / 0x100_0000;
 
 /** Good sky, good corrections: fixed after half a minute, with the small unrest that every receiver shows. */
 export const steady =

@@ -37,7 +37,7 @@ function MyCrew({ crewId }: { crewId: number }) {
   const crew = useMyCrew(crewId);
   const { now, day, rovers, hasNoSignal, asOf } = crew;
   const own = useTaps(userId);
-  const lostFixes = useLostFixes(day);
+  const lostFixes = useLostFixes(day, crewId);
   useTapAnswers(crewId);
   useEffect(() => worker.keep(['/api/auth/me', crewDayPath(crewId)]), [crewId]);
   const shift = shiftNow(day, waitingSteps(own.waiting));
