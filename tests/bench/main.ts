@@ -2,6 +2,7 @@ import { board } from './board.js';
 import { diagnosis } from './diagnosis.js';
 import { ingestAnswer, ingestHttp1, ingestHttp60, capacity } from './ingest-http.js';
 import { ingestTcp } from './ingest-tcp.js';
+import { notices } from './notices.js';
 import { printRow, type Row } from './report.js';
 import { fanOut, freshness, stalled } from './stream.js';
 import { timelineQuery } from './timeline-query.js';
@@ -21,6 +22,7 @@ const benches: Record<string, () => Promise<Row[]>> = {
   'timeline/query': timelineQuery,
   board,
   diagnosis: () => diagnosis(seed),
+  notices: () => notices(seed),
   capacity,
 };
 

@@ -1,6 +1,7 @@
-import { existsSync, mkdtempSync, readdirSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, readdirSync, rmSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
+import { PhotosService } from '@hubtack/backend/photos/photos.service.js';
 import type { Photo } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import sharp from 'sharp';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -107,14 +108,33 @@ describe('photos of a lost fix', () => {
     const first = await send([photo], { key: 'a-key' });
     const second = await send([photo], { key: 'a-key' });
     expect(second.body).toEqual(first.body);
+    const [third, fourth] = await Promise.all([send([photo], { key: 'b' }), send([photo], { key: 'b' })]);
+    expect(third.body).toEqual(fourth.body);
+    rmSync(join(uploads, 'photos', stored()[0]!));
     expect(stored()).toHaveLength(1);
   });
   it('another crew cannot add or see any, and learns of none', async () => {
     const { body } = await send([await jpeg()]);
     expect((await send([await jpeg()], { who: other })).status).toBe(404);
     expect((await read(body[0]!, other)).status).toBe(404);
-    expect((await chief.call('GET', `/api/lost-fixes/${id}/photos/99`)).status).toBe(404);
+    const missing = await chief.call('GET', `/api/lost-fixes/${id}/photos/99`);
+    expect([missing.status, missing.headers.get('cache-control')]).toEqual([404, 'no-store']);
   });
+});
+
+it('files that belong to nobody go after a day, and only those', async () => {
+  await send([await jpeg()]);
+  const folder = join(uploads, 'photos');
+  for (const name of [`${'0'.repeat(8)}-0000-0000-0000-${'0'.repeat(12)}.webp`, 'somebody-elses.txt'])
+    writeFileSync(join(folder, name), 'x');
+  const photosService = server.app.get(PhotosService);
+  server.clock.advance(3_600_000);
+  await photosService.dropOrphans();
+  expect(stored()).toHaveLength(3);
+  server.clock.advance(2 * 86_400_000);
+  await photosService.dropOrphans();
+  expect(stored()).toHaveLength(2);
+  expect(stored()).toContain('somebody-elses.txt');
 });
 
 describe('what is refused leaves nothing behind', () => {

@@ -128,6 +128,11 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     this.isRosterStale = false;
   }
 
+  /** Lost fixes that have not ended and are not closed. */
+  openIds(): number[] {
+    return this.lostFixes.openRows().map(({ id }) => id);
+  }
+
   /** A person has done something about a lost fix of this rover. */
   lookAgain(roverId: number): void {
     const rover = this.rovers.get(roverId);

@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto';
-import { createReadStream, mkdirSync, type ReadStream } from 'node:fs';
+import { createReadStream, existsSync, mkdirSync, type ReadStream } from 'node:fs';
 import { readdir, rename, rm, stat, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { Inject, Injectable } from '@nestjs/common';
@@ -33,21 +33,24 @@ export class PhotoFiles {
     return name;
   }
 
-  read(name: string): ReadStream {
-    return createReadStream(this.path(name));
+  /** Null when the file is gone, as after a restore without the uploads. */
+  read(name: string): ReadStream | null {
+    const path = this.path(name);
+    return existsSync(path) ? createReadStream(path) : null;
   }
 
   async remove(names: readonly string[]): Promise<void> {
     for (const name of names) await rm(this.path(name), { force: true });
   }
 
-  /** Names of files that have not been touched since an instant, unfinished ones included. */
+  /** Names of photos that have not been touched since an instant, unfinished ones included; what is not ours is left alone. */
   async untouchedSince(instant: number): Promise<string[]> {
     const names = await readdir(this.folder).catch(() => []);
     const old: string[] = [];
-    for (const name of names) {
-      const { mtimeMs } = await stat(join(this.folder, name));
-      if (mtimeMs < instant) old.push(name);
+    for (const name of names.filter((one) => NAME.test(one.replace(UNFINISHED, '')))) {
+      // Gone meanwhile is gone.
+      const known = await stat(join(this.folder, name)).catch(() => null);
+      if (known && known.mtimeMs < instant) old.push(name);
     }
     return old;
   }

@@ -1,11 +1,11 @@
 import {
   Controller,
   Get,
-  Header,
   Headers,
   Param,
   Post,
   Req,
+  Res,
   StreamableFile,
   UseInterceptors,
 } from '@nestjs/common';
@@ -20,10 +20,10 @@ import {
 } from '@nestjs/swagger';
 import { idParam } from '@hubtack/contracts/common.js';
 import { photoList, type Photo } from '@hubtack/contracts/lost-fixes/lost-fix.js';
-import type { Request } from 'express';
+import type { Request, Response } from 'express';
 import { AllowRoles, CurrentViewer, type Viewer } from '../auth/access.js';
 import { PhotosService } from './photos.service.js';
-import { PhotoUpload } from './upload.interceptor.js';
+import { PhotoUploadInterceptor } from './upload.interceptor.js';
 
 @ApiTags('lost fixes')
 @Controller('lost-fixes/:id/photos')
@@ -33,7 +33,7 @@ export class PhotosController {
   /** Up to four in all, JPEG, PNG or WebP by their content; all of a post are kept or none. Answers what is there now. */
   @Post()
   @AllowRoles('dispatcher', 'technician', 'crewChief')
-  @UseInterceptors(PhotoUpload())
+  @UseInterceptors(PhotoUploadInterceptor)
   @ApiConsumes('multipart/form-data')
   @ApiHeader({ name: 'Idempotency-Key', required: false })
   @ApiBody({
@@ -60,16 +60,18 @@ export class PhotosController {
 
   @Get(':photoId')
   @AllowRoles('dispatcher', 'technician', 'crewChief')
-  @Header('Cache-Control', 'private, max-age=31536000, immutable')
-  @Header('X-Content-Type-Options', 'nosniff')
   @ApiProduces('image/webp')
   @ApiOkResponse({ schema: { type: 'string', format: 'binary' } })
   get(
     @CurrentViewer() viewer: Viewer,
     @Param('id', { schema: idParam }) id: number,
     @Param('photoId', { schema: idParam }) photoId: number,
+    @Res({ passthrough: true }) response: Response,
   ): StreamableFile {
-    return new StreamableFile(this.photos.open(viewer, id, photoId), {
+    const file = this.photos.open(viewer, id, photoId);
+    // A photo never changes. Said only of one that is there: a refusal is not to be kept.
+    response.setHeader('Cache-Control', 'private, max-age=31536000, immutable');
+    return new StreamableFile(file, {
       type: 'image/webp',
       disposition: 'inline',
     });

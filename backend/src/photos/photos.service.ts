@@ -17,12 +17,16 @@ import { TapsService } from '../taps/taps.service.js';
 import { ImageError, storedImage, type StoredImage } from './image.js';
 import { PhotoFiles } from './photo.files.js';
 
+/** Each may hold four photos of ten megabytes. */
+const MOST_UPLOADS = 6;
+
 /** Photos of lost fixes: all of a post are kept, or none. */
 @Injectable()
 export class PhotosService {
   private readonly logger = new Logger(PhotosService.name);
-  /** Pictures are worked on one after the other. */
   private queue: Promise<unknown> = Promise.resolve();
+  /** Bodies that are being read, or wait for their turn. */
+  private uploads = 0;
 
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
@@ -34,28 +38,57 @@ export class PhotosService {
     private readonly clock: Clock,
   ) {}
 
+  /** Before a body is read: strangers send nothing, and only so many bodies are in memory at once. */
+  begin(viewer: Viewer, lostFixId: number): void {
+    this.access.visible(viewer, lostFixId);
+    if (this.uploads >= MOST_UPLOADS)
+      throw new ProblemException(503, 'storageBusy', 'Too many photos are on their way. Send them again.', {
+        retryAfterSeconds: 5,
+      });
+    this.uploads++;
+  }
+
+  end(): void {
+    this.uploads--;
+  }
+
   /** Adds photos; answers all that the lost fix has now. With a key that was answered before, that answer again. */
-  async add(
+  add(
     viewer: Viewer,
     lostFixId: number,
     files: readonly Buffer[],
     key: string | undefined,
   ): Promise<Photo[]> {
-    this.access.visible(viewer, lostFixId);
+    // One post after the other: pictures take the processor, and the same post twice at once must be seen as such.
+    const mine = this.queue.then(() => this.addNow(viewer, lostFixId, files, key));
+    this.queue = mine.catch(() => undefined);
+    return mine;
+  }
+
+  private async addNow(
+    viewer: Viewer,
+    lostFixId: number,
+    files: readonly Buffer[],
+    key: string | undefined,
+  ): Promise<Photo[]> {
     const request = `POST /api/lost-fixes/${lostFixId}/photos`;
     const before = key === undefined ? null : this.taps.answered<Photo[]>(viewer, key, request);
     if (before) return before.answer;
     if (files.length === 0) throw refusal('There is no photo in it.');
     this.checkRoom(lostFixId, files.length);
-    const images = await this.convert(files);
+    const images: StoredImage[] = [];
+    for (const [index, file] of files.entries()) images.push(await converted(file, index));
     const names: string[] = [];
+    let photos: Photo[];
     try {
       for (const { bytes } of images) names.push(await this.files.write(bytes));
-      return this.record(viewer, lostFixId, images, names, key, request);
+      photos = this.record(viewer, lostFixId, images, names, key, request);
     } catch (error) {
       await this.files.remove(names);
       throw error;
     }
+    this.changes.announce({ kind: 'lostFix', lostFixIds: [lostFixId] });
+    return photos;
   }
 
   open(viewer: Viewer, lostFixId: number, photoId: number): ReadStream {
@@ -66,7 +99,9 @@ export class PhotosService {
       .where(and(eq(lostFixPhotos.id, photoId), eq(lostFixPhotos.lostFixId, lostFixId)))
       .get();
     if (!row) throw notFound('This photo');
-    return this.files.read(row.file);
+    const file = this.files.read(row.file);
+    if (!file) throw notFound('This photo');
+    return file;
   }
 
   /** A file whose post was cut off between writing and recording belongs to nobody. */
@@ -87,16 +122,6 @@ export class PhotosService {
     }
   }
 
-  private convert(files: readonly Buffer[]): Promise<StoredImage[]> {
-    const mine = this.queue.then(async () => {
-      const images: StoredImage[] = [];
-      for (const [index, file] of files.entries()) images.push(await converted(file, index));
-      return images;
-    });
-    this.queue = mine.catch(() => undefined);
-    return mine;
-  }
-
   private record(
     viewer: Viewer,
     lostFixId: number,
@@ -105,7 +130,7 @@ export class PhotosService {
     key: string | undefined,
     request: string,
   ): Photo[] {
-    const photos = this.taps.once(viewer, key, request, () => {
+    return this.taps.once(viewer, key, request, () => {
       this.checkRoom(lostFixId, images.length);
       const at = this.clock.now();
       const by = viewer.name;
@@ -118,8 +143,6 @@ export class PhotosService {
       this.database.insert(lostFixHistory).values({ lostFixId, at, by, kind: 'photo', text }).run();
       return this.lostFixes.photos(lostFixId);
     });
-    this.changes.announce({ kind: 'lostFix', lostFixIds: [lostFixId] });
-    return photos;
   }
 
   private checkRoom(lostFixId: number, count: number): void {

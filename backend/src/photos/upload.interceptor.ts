@@ -1,15 +1,11 @@
-import {
-  mixin,
-  type CallHandler,
-  type ExecutionContext,
-  type NestInterceptor,
-  type Type,
-} from '@nestjs/common';
+import { Injectable, type CallHandler, type ExecutionContext, type NestInterceptor } from '@nestjs/common';
 import { MAX_PHOTOS, MAX_PHOTO_BYTES } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import type { Request, Response } from 'express';
 import multer, { MulterError } from 'multer';
-import type { Observable } from 'rxjs';
+import { finalize, type Observable } from 'rxjs';
+import type { Viewer } from '../auth/access.js';
 import { ProblemException } from '../common/problem.exception.js';
+import { PhotosService } from './photos.service.js';
 
 const refusals: Partial<Record<MulterError['code'], { status: number; detail: string }>> = {
   LIMIT_FILE_SIZE: { status: 413, detail: `A photo may have at most ${MAX_PHOTO_BYTES / 2 ** 20} MB.` },
@@ -31,24 +27,31 @@ function problemOf(error: unknown): unknown {
   });
 }
 
-/** Reads photos of a multipart body into memory, bounded; `request.files` holds them. Runs after the guard: strangers upload nothing. */
-export function PhotoUpload(): Type<NestInterceptor> {
-  const read = multer({
-    storage: multer.memoryStorage(),
-    limits: { fileSize: MAX_PHOTO_BYTES, files: MAX_PHOTOS, fields: 4, fieldSize: 1000 },
-  }).array('photos', MAX_PHOTOS);
+const read = multer({
+  storage: multer.memoryStorage(),
+  limits: { fileSize: MAX_PHOTO_BYTES, files: MAX_PHOTOS, fields: 4, fieldSize: 1000 },
+}).array('photos', MAX_PHOTOS);
 
-  class UploadInterceptor implements NestInterceptor {
-    async intercept(context: ExecutionContext, next: CallHandler): Promise<Observable<unknown>> {
-      const http = context.switchToHttp();
+/** Reads photos of a multipart body into memory, bounded, once it is clear that this viewer may send any; `request.files` holds them. */
+@Injectable()
+export class PhotoUploadInterceptor implements NestInterceptor {
+  constructor(private readonly photos: PhotosService) {}
+
+  async intercept(context: ExecutionContext, next: CallHandler): Promise<Observable<unknown>> {
+    const http = context.switchToHttp();
+    const request = http.getRequest<Request & { user: Viewer }>();
+    this.photos.begin(request.user, Number(request.params.id));
+    try {
       await new Promise<void>((resolve, reject) => {
-        read(http.getRequest<Request>(), http.getResponse<Response>(), (error: unknown) => {
+        read(request, http.getResponse<Response>(), (error: unknown) => {
           if (error) reject(problemOf(error) as Error);
           else resolve();
         });
       });
-      return next.handle();
+    } catch (error) {
+      this.photos.end();
+      throw error;
     }
+    return next.handle().pipe(finalize(() => this.photos.end()));
   }
-  return mixin(UploadInterceptor);
 }
