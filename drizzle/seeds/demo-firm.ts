@@ -143,7 +143,8 @@ function shiftsOf(random: RandomGenerator, now: number): DemoShift[] {
     past.push({ start, end, open: false, pauses: [{ start: lunch, end: lunch + 30 * MINUTE }] });
   }
   const start = now - TODAY_BEGAN_MS;
-  return [...past, { start, end: now - MINUTE, open: true, pauses: [] }];
+  // The simulated fleet goes on from here within seconds.
+  return [...past, { start, end: now, open: true, pauses: [] }];
 }
 
 function spansOfShift(

@@ -135,6 +135,11 @@ describe('the likely cause', () => {
     expect(verdict(atLast(308)).cause).toBe('neverCorrected');
     expect(verdict(atLast(361)).cause).not.toBe('neverCorrected');
   });
+  it('never corrected is no explanation for a fix that was there, whatever is still stored of the time before', () => {
+    expect(verdict(lost(() => ({ ...float, satellites: 9 }), { correctedAt: START - 10 * S })).cause).toBe(
+      'skyBlocked',
+    );
+  });
   it('not heard: nothing in the shift', () => {
     const evidence = lost(() => ({}), {
       kind: 'notHeard',

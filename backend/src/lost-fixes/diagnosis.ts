@@ -34,8 +34,9 @@ type Rule = (evidence: Evidence, figures: Figures, limits: Limits) => string[] |
 
 /** Corrections that have come this short a time ago are the end of their absence. */
 const JUST_CAME_MS = 60_000;
-const hadCorrections = ({ correctedAt, now }: Evidence): boolean =>
-  correctedAt !== null && now - correctedAt > JUST_CAME_MS;
+/** Who has lost a fix had corrections to fix it with. */
+const hadCorrections = ({ kind, correctedAt, now }: Evidence): boolean =>
+  kind === 'lostFix' || (correctedAt !== null && now - correctedAt > JUST_CAME_MS);
 
 const seconds = (ms: number): string => `${Math.round(ms / 1000)} s`;
 const kilometres = (metres: number): string => `${(metres / 1000).toFixed(1)} km`;
@@ -119,7 +120,8 @@ const rules: Record<Cause, Rule> = {
     figures.floatShare >= MOST && !figures.areCorrectionsLost
       ? ['float', ageIsGood(figures), ...[satellites(figures)].filter((line) => line !== null)]
       : null,
-  unclear: () => ['the evidence is mixed'],
+  unclear: ({ before, since }) =>
+    before.length + since.length === 0 ? ['no sentences of that time are kept'] : ['the evidence is mixed'],
 };
 
 /**

@@ -133,7 +133,12 @@ export class NoticesService implements OnApplicationBootstrap, BeforeApplication
       const row = this.notices.insert({ userId, lostFixId, subject, dueKey, at: now, text, ways });
       if (!row) return [];
       if (ways.includes('mail')) {
-        const mail = noticeMail(person.email, text, lostFix, `${publicUrlOf(this.environment)}/lost-fixes/${lostFixId}`);
+        const mail = noticeMail(
+          person.email,
+          text,
+          lostFix,
+          `${publicUrlOf(this.environment)}/lost-fixes/${lostFixId}`,
+        );
         this.outbox.put(tx, { ...mail, reason: `notice ${userId} ${dueKey}` });
       }
       const { id, at, seenAt } = row;

@@ -44,7 +44,7 @@ export class PhotoUploadInterceptor implements NestInterceptor {
     try {
       await new Promise<void>((resolve, reject) => {
         read(request, http.getResponse<Response>(), (error: unknown) => {
-          if (error) reject(problemOf(error) as Error);
+          if (error) reject(problemOf(error));
           else resolve();
         });
       });

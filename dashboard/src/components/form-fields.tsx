@@ -89,6 +89,12 @@ export function TimeInput({ name, label }: { name: string; label: string }) {
   return <Input type="time" aria-label={label} {...input} input={{ ref }} />;
 }
 
+/** A date and time in a line of its own kind; empty is nothing. */
+export function DateTimeInput({ name, label }: { name: string; label: string }) {
+  const { input, ref } = useFormField(name, 'optionalText');
+  return <Input type="datetime-local" aria-label={label} {...input} input={{ ref }} />;
+}
+
 interface ChoiceFieldProps extends FieldProps {
   options: readonly { value: string | number; label: string }[];
   /** What an empty choice is called; without it something must be chosen. */

@@ -89,7 +89,12 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
         </Figure>
       </dl>
       <EpochCharts roverId={id} from={from} to={null} zone={timeZone} />
-      {role !== 'crewChief' && <Link to={`/rovers/${id}`}>Rover, keys and assignments</Link>}
+      {role !== 'crewChief' && (
+        <p className="panel-links">
+          <Link to={`/lost-fixes?roverId=${id}`}>Lost fixes of this rover</Link>
+          <Link to={`/rovers/${id}`}>Rover, keys and assignments</Link>
+        </p>
+      )}
     </aside>
   );
 }

@@ -12,6 +12,7 @@ import { crewsQuery, useAddCrew, useChangeCrew } from '../../lib/crews';
 import { useMe } from '../../lib/session';
 import { settingsQuery } from '../../lib/settings';
 import { sitesQuery } from '../../lib/sites';
+import { CrewToday } from './crew-today';
 import { PatternFields } from './pattern-fields';
 import { weekdays } from './weekdays';
 
@@ -108,6 +109,7 @@ export default function CrewsPage() {
   const query = useQuery(crewsQuery);
   const { role } = useMe();
   const [open, setOpen] = useState<Crew | 'new' | null>(null);
+  const [todayOf, setTodayOf] = useState<Crew | null>(null);
   const mayChange = role !== 'crewChief';
   const close = () => setOpen(null);
   return (
@@ -150,6 +152,18 @@ export default function CrewsPage() {
                   : []),
                 { name: 'In use', cell: (crew) => (crew.active ? 'yes' : 'put away') },
                 {
+                  name: 'Today',
+                  cell: (crew) => (
+                    <Button
+                      size="small"
+                      onClick={() => setTodayOf(crew)}
+                      aria-label={`Today of ${crew.name}`}
+                    >
+                      Today
+                    </Button>
+                  ),
+                },
+                {
                   name: 'Change',
                   cell: (crew) =>
                     mayChange && (
@@ -161,6 +175,7 @@ export default function CrewsPage() {
               ]}
             />
           )}
+          {todayOf && <CrewToday crew={todayOf} onClose={() => setTodayOf(null)} />}
           {open === 'new' && <AddCrew onDone={close} />}
           {open !== null && open !== 'new' && <ChangeCrew crew={open} onDone={close} />}
         </>

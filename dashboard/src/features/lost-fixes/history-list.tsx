@@ -27,7 +27,7 @@ export function HistoryList({ history, zone }: { history: readonly HistoryEntry[
           <li key={id}>
             <time title={utc(at)}>{clockTimeSeconds(at, zone)}</time>
             <span>
-              <strong>{words[kind]}</strong> {text} {by && <small>{by}</small>}
+              <strong>{words[kind]}</strong> {text !== words[kind] && text} {by && <small>{by}</small>}
             </span>
           </li>
         ))}

@@ -95,7 +95,7 @@ function RulesTable({ rules }: { rules: readonly NoticeRule[] }) {
           <MessageBarBody>{(change.error ?? back.error)!.message}</MessageBarBody>
         </MessageBar>
       )}
-      <div className="form-buttons">
+      <div className="notice-buttons">
         <Button appearance="primary" type="submit" disabled={!read.success || change.isPending}>
           Save
         </Button>

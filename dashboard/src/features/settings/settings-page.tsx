@@ -2,9 +2,38 @@ import { settings, type Settings } from '@hubtack/contracts/settings/settings.js
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Form } from '../../components/form';
-import { ChoiceField, TextField } from '../../components/form-fields';
+import { ChoiceField, NumberField, TextField } from '../../components/form-fields';
 import { ListPage } from '../../components/list-page';
+import './settings.css';
 import { settingsQuery, useChangeSettings } from '../../lib/settings';
+
+const limitFields = [
+  ['lostAfterSeconds', 'A lost fix counts after, s', 'And is raised then'],
+  ['regainedAfterSeconds', 'A fix counts again after, s', 'A shorter fixed run is none'],
+  ['firstFixWithinMinutes', 'First fix within, min', 'Of the first report of the shift'],
+  ['heardWithinMinutes', 'Heard within, min', 'Of the beginning of the shift'],
+  ['maxAgeSeconds', 'Corrections stopped from an age of, s', undefined],
+  ['ageClearsSeconds', 'Corrections again under an age of, s', 'A margin, so that one outage stays one'],
+  ['minSatellites', 'Fewest satellites', 'Fewer count as a blocked sky'],
+  ['maxHdop', 'Highest HDOP', undefined],
+  ['maxBaselineKm', 'Longest distance to the base, km', undefined],
+] as const;
+
+/** When a lost fix is raised, and what it is explained by. */
+function LimitFields() {
+  return (
+    <fieldset className="limits">
+      <legend>Limits of lost fixes</legend>
+      <p>
+        Usual values differ from place to place and from receiver to receiver. A change counts from the next
+        look on, for the shifts of today.
+      </p>
+      {limitFields.map(([name, label, hint]) => (
+        <NumberField key={name} name={`limits.${name}`} label={label} hint={hint} required />
+      ))}
+    </fieldset>
+  );
+}
 
 function SettingsForm({ current }: { current: Settings }) {
   const change = useChangeSettings();
@@ -52,6 +81,7 @@ function SettingsForm({ current }: { current: Settings }) {
             { value: 'true', label: 'Keep them as long as raw epochs' },
           ]}
         />
+        <LimitFields />
       </Form>
       {isSaved && <p role="status">Saved.</p>}
     </div>
