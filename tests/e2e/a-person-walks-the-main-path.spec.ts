@@ -124,8 +124,10 @@ describe('each role signs in and does what it came for', () => {
   it('crew chief: the own crew on a phone, and nothing else', async () => {
     const { page, errors } = await newPage(browser, server.url, { width: 390 });
     await signIn(page, 'chief.alder');
-    expect(await page.getByRole('row', { name: /R-0/ }).count()).toBe(1);
+    await page.getByRole('heading', { name: 'Crew Alder' }).waitFor();
+    await page.getByRole('link', { name: 'Board', exact: true }).click();
     await page.getByRole('row', { name: lane('Alder') }).waitFor();
+    expect(await page.getByRole('row', { name: /R-0/ }).count()).toBe(1);
     expect(await page.evaluate(() => document.documentElement.scrollWidth)).toBeLessThanOrEqual(390);
     await page.goto('/users');
     await page.getByText('Your role may not do this.').first().waitFor();
@@ -152,6 +154,7 @@ describe('axe finds nothing serious', () => {
     await page.getByRole('heading', { name: 'Sign in' }).waitFor();
     await expectAccessible(page);
     await signIn(page, 'manager');
+    await page.getByRole('button', { name: 'Dogwood' }).waitFor();
     await expectAccessible(page);
     await page.getByRole('button', { name: 'Dogwood' }).click();
     await page.getByRole('complementary').getByText('Satellites').first().waitFor();
@@ -166,6 +169,9 @@ describe('axe finds nothing serious', () => {
       '/settings',
       '/sentence-reader',
       '/wall',
+      '/lost-fixes',
+      '/lost-fixes/1',
+      '/notices',
     ]) {
       await page.goto(path);
       await page.getByRole('heading', { level: 1 }).waitFor();
@@ -173,6 +179,11 @@ describe('axe finds nothing serious', () => {
       await expectAccessible(page);
     }
     await page.context().close();
+    const phone = await newPage(browser, server.url, { look, width: 390 });
+    await signIn(phone.page, 'chief.dogwood');
+    await phone.page.getByRole('heading', { name: 'Crew Dogwood' }).waitFor();
+    await expectAccessible(phone.page);
+    await phone.page.context().close();
   });
 });
 

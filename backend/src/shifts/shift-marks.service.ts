@@ -155,7 +155,7 @@ export class ShiftMarksService {
 
   private markedAt(crewId: number, at: number): StepShift | null {
     const row = this.database
-      .select({ id: shifts.id, start: shifts.startAt, end: shifts.endAt })
+      .select({ id: shifts.id, start: shifts.startAt, end: shifts.endAt, endedBy: shifts.endedBy })
       .from(shifts)
       .where(
         and(
@@ -172,7 +172,14 @@ export class ShiftMarksService {
       .where(eq(shiftPauses.shiftId, row.id))
       .orderBy(asc(shiftPauses.startAt))
       .all();
-    return { ...row, pauses };
+    const { id, start, end, endedBy } = row;
+    return {
+      id,
+      start,
+      end,
+      isFinished: endedBy !== null && end !== null && end <= this.clock.now(),
+      pauses,
+    };
   }
 
   private plannedAt(
@@ -186,7 +193,9 @@ export class ShiftMarksService {
     const planned = crewShiftsOf({ start: at, end: at + 1 }, marks, pattern, zone, () => null).find(
       ({ basis }) => basis === 'pattern',
     );
-    return planned ? { id: null, start: planned.start, end: planned.end, pauses: [] } : null;
+    return planned
+      ? { id: null, start: planned.start, end: planned.end, isFinished: false, pauses: [] }
+      : null;
   }
 
   /** Start of the first shift marked after an instant. */
@@ -293,7 +302,9 @@ export class ShiftMarksService {
   }
 
   private announce(crewId: number, from: number): void {
-    this.changes.announce({ kind: 'marks', crewId, from });
+    // A day's first mark takes the whole of its pattern away, its last one gone brings it back.
+    const { start } = localDayOf(from, this.settings.get().timeZone);
+    this.changes.announce({ kind: 'marks', crewId, from: start });
     this.changes.announce({ kind: 'firm' });
   }
 }

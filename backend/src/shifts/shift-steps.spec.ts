@@ -6,6 +6,7 @@ const shift = (id: number | null, pauses: MarkedPause[] = [], end: number | null
   id,
   start: 100,
   end,
+  isFinished: false,
   pauses,
 });
 const states: Record<string, StepShift | null> = {
@@ -65,6 +66,13 @@ it('a tap that comes after later ones is refused when it contradicts them', () =
   });
   expect(step('resume', 'paused', 200)).toEqual({ refusal: 'The shift is not paused at 200.' });
   expect(step('pause', 'running again', 220)).toEqual({ refusal: 'The shift has been paused since 200.' });
+  expect(step('finish', 'running again', 220)).toEqual({
+    refusal: 'A pause until 250, later than this, is marked already.',
+  });
+  const finished: StepShift = { ...shift(7, [], 900), isFinished: true };
+  expect(stepOf('finish', 300, undefined, finished, null, String)).toEqual({
+    refusal: 'The shift was finished at 900.',
+  });
   expect(stepOf('start', 50, undefined, null, 100, String)).toEqual({
     refusal: 'A shift that begins at 100 is marked already.',
   });

@@ -11,6 +11,8 @@ export interface StepShift {
   id: number | null;
   start: number;
   end: number | null;
+  /** Somebody has marked its end; a planned end has not come about by being planned. */
+  isFinished: boolean;
   pauses: readonly MarkedPause[];
 }
 
@@ -57,6 +59,9 @@ export function stepOf(
       return { effect: { do: 'resume', pauseId: openPause.id, at } };
     case 'finish':
       if (at <= current.start) return { refusal: `The shift has only begun at ${clock(current.start)}.` };
+      if (current.isFinished) return { refusal: `The shift was finished at ${clock(current.end!)}.` };
+      if (pausedAt && pausedAt.end !== null)
+        return { refusal: `A pause until ${clock(pausedAt.end)}, later than this, is marked already.` };
       return { effect: { do: 'finish', shift: current, at, openPauseId: openPause?.id ?? null } };
   }
 }

@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { taps } from '@hubtack/drizzle/schema/taps.js';
-import { and, eq } from 'drizzle-orm';
+import { and, eq, sql } from 'drizzle-orm';
 import type { Viewer } from '../auth/access.js';
 import { Clock } from '../common/clock.js';
 import { conflict, ProblemException } from '../common/problem.exception.js';
@@ -30,7 +30,11 @@ export class TapsService {
       const known = this.answered<T>(viewer, key, request);
       if (known) return known.answer;
       const answer = effect();
-      tx.insert(taps).values({ userId: viewer.userId!, key, at: this.clock.now(), request, answer }).run();
+      // Drizzle would write an answer that is null as SQL's NULL, not as JSON's.
+      const kept = sql`${JSON.stringify(answer ?? null)}`;
+      tx.insert(taps)
+        .values({ userId: viewer.userId!, key, at: this.clock.now(), request, answer: kept })
+        .run();
       return answer;
     });
   }

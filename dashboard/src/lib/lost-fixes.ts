@@ -58,7 +58,8 @@ export function mergeLostFixes(
 ): LostFix[] {
   const byId = new Map(changed.map((one) => [one.id, one]));
   const known = list.map((one) => byId.get(one.id) ?? one);
-  const added = changed.filter(({ id }) => !list.some((one) => one.id === id));
+  // The same one may have changed twice in a batch: the last counts.
+  const added = [...byId.values()].filter(({ id }) => !list.some((one) => one.id === id));
   return [...added.toReversed(), ...known].filter(belongs);
 }
 

@@ -33,6 +33,8 @@ const basisWords: Record<CrewDayView['basis'], string> = {
 export function CrewToday({ crew, onClose }: { crew: Crew; onClose: () => void }) {
   const { data: day, error, refetch } = useQuery(officeDayQuery(crew.id));
   const [editing, setEditing] = useState<Shift | 'new' | null>(null);
+  const { role } = useMe();
+  const maySetRight = role === 'dispatcher' || role === 'manager';
   const done = () => setEditing(null);
   return (
     <Sheet title={`${crew.name} today`} onClose={onClose}>
@@ -43,9 +45,9 @@ export function CrewToday({ crew, onClose }: { crew: Crew; onClose: () => void }
           <p>
             {dutyWords[day.duty]} {basisWords[day.basis]}
           </p>
-          <Steps crewId={crew.id} day={day} />
-          <Marks day={day} onEdit={setEditing} />
-          <Button onClick={() => setEditing('new')}>Add a shift</Button>
+          {role !== 'technician' && <Steps crewId={crew.id} day={day} />}
+          <Marks day={day} onEdit={maySetRight ? setEditing : null} />
+          {maySetRight && <Button onClick={() => setEditing('new')}>Add a shift</Button>}
         </>
       )}
       {editing === 'new' && <ShiftForm crewId={crew.id} onDone={done} />}
@@ -57,11 +59,11 @@ export function CrewToday({ crew, onClose }: { crew: Crew; onClose: () => void }
 function Steps({ crewId, day }: { crewId: number; day: CrewDayView }) {
   const step = useShiftStep(crewId);
   const [reason, setReason] = useState<PauseReason>('lunch');
-  const hasOpenMarks = day.shifts.some(({ end }) => end === null);
+  const isMarkedNow = day.basis === 'marks' && (day.duty === 'onShift' || day.duty === 'paused');
   return (
     <>
       <div className="crew-steps">
-        {!hasOpenMarks && day.duty !== 'paused' && (
+        {!isMarkedNow && (
           <Button disabled={step.isPending} onClick={() => step.mutate({ step: 'start' })}>
             Start
           </Button>
@@ -104,7 +106,7 @@ function Steps({ crewId, day }: { crewId: number; day: CrewDayView }) {
   );
 }
 
-function Marks({ day, onEdit }: { day: CrewDayView; onEdit: (shift: Shift) => void }) {
+function Marks({ day, onEdit }: { day: CrewDayView; onEdit: ((shift: Shift) => void) | null }) {
   const { timeZone } = useMe();
   const time = (at: number | null) => (at === null ? 'open' : clockTime(at, timeZone));
   return (
@@ -122,9 +124,11 @@ function Marks({ day, onEdit }: { day: CrewDayView; onEdit: (shift: Shift) => vo
               </span>
             ))}
           </span>
-          <Button size="small" onClick={() => onEdit(shift)}>
-            Set right
-          </Button>
+          {onEdit && (
+            <Button size="small" onClick={() => onEdit(shift)}>
+              Set right
+            </Button>
+          )}
         </li>
       ))}
     </ul>

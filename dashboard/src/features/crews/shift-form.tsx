@@ -6,6 +6,7 @@ import {
   type Shift,
   type ShiftBody,
 } from '@hubtack/contracts/shifts/shift.js';
+import { useState } from 'react';
 import { useFieldArray, useFormContext } from 'react-hook-form';
 import { z } from 'zod';
 import { Form } from '../../components/form';
@@ -26,6 +27,7 @@ type ShiftFields = z.infer<typeof shiftFields>;
 /** Marks set right: beginning, end and pauses, in the firm's zone. */
 export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: Shift; onDone: () => void }) {
   const { timeZone: zone } = useMe();
+  const [opened] = useState(() => Date.now());
   const add = useAddShift(crewId);
   const change = useChangeShift(shift?.id ?? 0);
   const remove = useRemoveShift(shift?.id ?? 0);
@@ -43,7 +45,7 @@ export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: S
     <Form
       schema={shiftFields}
       defaults={{
-        start: text(shift?.start ?? Date.now()) ?? '',
+        start: text(shift?.start ?? opened) ?? '',
         end: text(shift?.end ?? null),
         pauses:
           shift?.pauses.map(({ start, end, reason }) => ({ start: text(start)!, end: text(end), reason })) ??
@@ -58,8 +60,7 @@ export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: S
       }}
     >
       <p>
-        Times of {zoneName(Date.now(), zone)}. The figures of the day follow; the audit keeps what stood
-        before.
+        Times of {zoneName(opened, zone)}. The figures of the day follow; the audit keeps what stood before.
       </p>
       <TextField name="start" label="Start" type="datetime-local" required />
       <TextField name="end" label="End" type="datetime-local" hint="Empty while the shift runs" />

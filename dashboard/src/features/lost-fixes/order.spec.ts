@@ -48,5 +48,7 @@ describe('what the stream brings', () => {
       [1, 'taken'],
     ]);
     expect(mergeLostFixes(list, [makeLostFix({ id: 2, status: 'closed' })], active)).toEqual([list[1]]);
+    const twice = [makeLostFix({ id: 9 }), makeLostFix({ id: 9, photos: 1 })];
+    expect(mergeLostFixes([], twice, active)).toEqual([twice[1]]);
   });
 });
