@@ -1,5 +1,6 @@
 import { board } from './board.js';
 import { diagnosis } from './diagnosis.js';
+import { flag } from './flag.js';
 import { ingestAnswer, ingestHttp1, ingestHttp60, capacity } from './ingest-http.js';
 import { ingestTcp } from './ingest-tcp.js';
 import { notices } from './notices.js';
@@ -23,6 +24,7 @@ const benches: Record<string, () => Promise<Row[]>> = {
   board,
   diagnosis: () => diagnosis(seed),
   notices: () => notices(seed),
+  flag,
   capacity,
 };
 

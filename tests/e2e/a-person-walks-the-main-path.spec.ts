@@ -36,7 +36,7 @@ describe('each role signs in and does what it came for', () => {
     await signIn(page, 'dispatcher');
     await page.getByText('live', { exact: true }).waitFor();
     await page
-      .getByRole('row', { name: lane('Alder') })
+      .getByRole('row', { name: lane('Currawong') })
       .getByText('Fixed')
       .waitFor({ timeout: 60_000 });
     await page.getByRole('button', { name: 'Dogwood' }).click();
@@ -218,7 +218,7 @@ describe('the stream in a real browser', () => {
     await server.start();
     await page.getByText('live', { exact: true }).waitFor({ timeout: 60_000 });
     await page
-      .getByRole('row', { name: lane('Alder') })
+      .getByRole('row', { name: lane('Currawong') })
       .getByText('Fixed')
       .waitFor({ timeout: 60_000 });
     await page.context().close();

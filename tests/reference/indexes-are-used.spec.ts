@@ -10,6 +10,22 @@ const queries: [index: string, sql: string][] = [
   ['rover_assignments_crew', 'SELECT * FROM rover_assignments WHERE crew_id = 1 AND start_at < 5'],
   ['shifts_crew', 'SELECT * FROM shifts WHERE crew_id = 1 AND start_at < 5'],
   ['shift_pauses_shift', 'SELECT * FROM shift_pauses WHERE shift_id IN (1, 2)'],
+  ['lost_fixes_rover', 'SELECT * FROM lost_fixes WHERE rover_id = 1 AND start_at >= 5 AND start_at < 9'],
+  ['lost_fixes_crew', 'SELECT * FROM lost_fixes WHERE crew_id = 1 AND start_at < 9'],
+  ['lost_fixes_mount_point', "SELECT * FROM lost_fixes WHERE mount_point = 'TANF00' AND start_at < 9"],
+  ['lost_fixes_shared', 'SELECT * FROM lost_fixes WHERE shared_id = 1'],
+  ['lost_fixes_active', 'SELECT * FROM lost_fixes WHERE end_at IS NULL AND closed_at IS NULL'],
+  [
+    'lost_fix_history_lost_fix',
+    "SELECT max(id) FROM lost_fix_history WHERE lost_fix_id = 1 AND kind = 'advice'",
+  ],
+  ['lost_fix_photos_lost_fix', 'SELECT * FROM lost_fix_photos WHERE lost_fix_id = 1'],
+  ['notices_user', 'SELECT * FROM notices WHERE user_id = 1 ORDER BY id DESC LIMIT 50'],
+  [
+    'outbox_waiting',
+    'SELECT * FROM outbox WHERE sent_at IS NULL AND failed_at IS NULL AND next_try_at <= 5 ORDER BY next_try_at',
+  ],
+  ['taps_at', 'DELETE FROM taps WHERE at < 5'],
 ];
 let test: ReturnType<typeof makeTestDatabase>;
 beforeAll(() => {

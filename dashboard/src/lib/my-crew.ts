@@ -48,10 +48,17 @@ async function readDay(crewId: number): Promise<DatedDay> {
 
 const REREAD_MS = 5000;
 
+const dayKey = (crewId: number) => ['crewDay', crewId] as const;
+
 export const crewDayQuery = (crewId: number) =>
   queryOptions({
-    queryKey: ['crewDay', crewId],
-    queryFn: () => readDay(crewId),
+    queryKey: dayKey(crewId),
+    queryFn: async ({ client }): Promise<DatedDay> => {
+      const read = await readDay(crewId);
+      // What this page knows is never older than what was kept, and may have answers to taps in it.
+      const known = read.isKept ? client.getQueryData<DatedDay>(dayKey(crewId)) : undefined;
+      return known ? { ...known, isKept: true } : read;
+    },
     refetchInterval: REREAD_MS,
     refetchOnWindowFocus: 'always',
     // Without signal the service worker answers, so there is always something to ask.

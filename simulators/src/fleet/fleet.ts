@@ -1,12 +1,13 @@
 import { setTimeout as delay } from 'node:timers/promises';
-import type { Scenario } from '../scenarios/scenarios.js';
+import type { CrewStory } from '../scenarios/scenarios.js';
 import type { FleetRover } from './rover-keys.js';
 import type { RoverLink } from './rover-link.js';
 import { SimulatedRover } from './simulated-rover.js';
 
 export interface FleetOptions {
   rovers: readonly FleetRover[];
-  scenario: Scenario;
+  /** What each crew does, by number. */
+  story: (crew: number) => CrewStory;
   seed: number;
   /** Simulated seconds in a second. */
   speed: number;
@@ -19,11 +20,11 @@ export interface FleetOptions {
 
 /** Runs a fleet: each rover sends once a simulated second, on the second, as receivers do. */
 export async function runFleet(options: FleetOptions): Promise<void> {
-  const { rovers, scenario, seed, speed, durationSeconds, signal } = options;
+  const { rovers, story, seed, speed, durationSeconds, signal } = options;
   const fleet = rovers.map((rover, index) => ({
     rover,
     link: options.link(rover),
-    simulated: new SimulatedRover(rover, scenario(index), seed * 1000 + index),
+    simulated: new SimulatedRover(rover, story(index).behaviours, seed * 1000 + index),
     busy: false,
   }));
   const start = Math.ceil(Date.now() / 1000) * 1000;

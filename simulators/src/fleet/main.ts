@@ -1,4 +1,4 @@
-import { existsSync } from 'node:fs';
+import { existsSync, writeFileSync } from 'node:fs';
 import { z } from 'zod';
 import { readOptions, stopWith } from '../cli/options.js';
 import { scenarioNames, scenarios } from '../scenarios/scenarios.js';
@@ -10,9 +10,11 @@ const usage = `Simulated crews that send real sentences to a running server.
 
   npm run fleet -- [--crews N] [--scenario NAME] [--seed N] [--speed X] [--via http|tcp] [--duration S]
                    [--url http://127.0.0.1:3000] [--tcp 127.0.0.1:10110]
-                   [--keys FILE | --email ADDRESS --password WORDS]
+                   [--keys FILE | --email ADDRESS --password WORDS] [--truth FILE]
 
 Scenarios: ${scenarioNames.join(', ')}
+--truth writes what is true of each rover beside the sentences: losses by cause, and what a chief would mark, in
+seconds since the start. A day lasts ten hours: give --speed.
 Keys come from --keys (with --crews, the first N of it); without, from a running demo's own file when no --crews is
 given; else crews, rovers and keys are made by signing in as a technician or manager.`;
 
@@ -32,6 +34,7 @@ const options = readOptions(
     keys: { type: 'string' },
     email: { type: 'string' },
     password: { type: 'string' },
+    truth: { type: 'string' },
   },
   z.object({
     crews: z.coerce.number().int().min(1).max(2000).optional(),
@@ -48,6 +51,7 @@ const options = readOptions(
     keys: z.string().optional(),
     email: z.string().default('manager@pennywort.example'),
     password: z.string().default('tack-in-the-hub'),
+    truth: z.string().optional(),
   }),
 );
 
@@ -79,9 +83,23 @@ try {
   console.log(
     `${rovers.length} rovers, scenario ${options.scenario}, seed ${options.seed}, over ${options.via}`,
   );
+  const story = scenarios[options.scenario](options.seed);
+  if (options.truth !== undefined) {
+    const crews = rovers.map(({ label }, index) => {
+      const { losses, marks } = story(index);
+      return { label, losses, marks };
+    });
+    const truth = {
+      scenario: options.scenario,
+      seed: options.seed,
+      startsAt: new Date().toISOString(),
+      crews,
+    };
+    writeFileSync(options.truth, `${JSON.stringify(truth, null, 2)}\n`);
+  }
   await runFleet({
     rovers,
-    scenario: scenarios[options.scenario],
+    story,
     seed: options.seed,
     speed: options.speed,
     durationSeconds: options.duration ?? null,

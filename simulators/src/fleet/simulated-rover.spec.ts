@@ -27,7 +27,7 @@ function run(behaviours: Behaviour[], seconds: number, seed = 1): (GgaSentence |
 describe('simulated rovers', () => {
   it('the same seed gives the same sentences, another seed others', () => {
     const text = (seed: number) => {
-      const rover = new SimulatedRover(site, scenarios.demo(3), seed);
+      const rover = new SimulatedRover(site, scenarios.demo(1)(3).behaviours, seed);
       return Array.from({ length: 100 }, (_, second) =>
         rover.sentencesAt(START + second * 1000, second),
       ).join('');

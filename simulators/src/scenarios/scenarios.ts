@@ -7,20 +7,43 @@ import {
   unrest,
   type Behaviour,
 } from './behaviour.js';
+import type { DayCrew, Marks } from './day.js';
+import { days } from './days.js';
+import type { SimulatedCause } from './loss-case.js';
+import { planLoss, type Loss } from './losses.js';
+import { randomOf } from './random.js';
 
-/** Behaviours of the n-th crew of a fleet. */
-export type Scenario = (crew: number) => Behaviour[];
+/** What a crew of a fleet does, and what is true of it where that is known. */
+export interface CrewStory {
+  behaviours: Behaviour[];
+  losses: Loss[];
+  marks: Marks | null;
+}
+
+/** Stories of the crews of a fleet, by number. */
+export type Scenario = (seed: number) => (crew: number) => CrewStory;
 
 const YEAR = 366 * 86_400;
 
-/** Something happens within the first minute: one under trees, one without corrections, one quiet, one never fixed. */
-const demo: Scenario = (crew) => {
+const plain =
+  (behaviours: (crew: number) => Behaviour[]): Scenario =>
+  () =>
+  (crew) => ({ behaviours: behaviours(crew), losses: [], marks: null });
+
+/**
+ * Something happens within the first minute: one under trees, one without corrections, one quiet, one never fixed. After four minutes the
+ * base station of the first two fails for both.
+ */
+const demo = plain((crew) => {
   const rounds = Array.from({ length: 200 }, (_, round) => round * 420);
+  const baseFails = rounds.map((at) => correctionsStopped(at + 240, 110));
   switch (crew % 6) {
     case 3:
       return [steady(4), ...rounds.map((at) => trees(at + 25, 150))];
     case 1:
-      return [steady(4), ...rounds.map((at) => correctionsStopped(at + 35, 120))];
+      return [steady(4), ...rounds.map((at) => correctionsStopped(at + 35, 120)), ...baseFails];
+    case 0:
+      return [steady(4), unrest(900), ...baseFails];
     case 4:
       return [steady(4), quiet(30, YEAR)];
     case 5:
@@ -28,15 +51,41 @@ const demo: Scenario = (crew) => {
     default:
       return [steady(4), unrest(900)];
   }
-};
+});
+
+/** Every crew loses its fix for one cause, one crew a little after the other. */
+const losing =
+  (cause: SimulatedCause): Scenario =>
+  (seed) =>
+  (crew) => {
+    const isFromStart = cause === 'neverCorrected' || cause === 'notHeard';
+    const from = isFromStart ? 0 : 120 + (cause === 'mountPointDown' ? 0 : crew * 7);
+    const random = randomOf(seed * 1000 + crew);
+    const { loss, behaviour } = planLoss(cause, from, from + (isFromStart ? 900 : 180), random);
+    return { behaviours: [steady(), behaviour], losses: [loss], marks: null };
+  };
+
+const ofDay =
+  (name: keyof typeof days): Scenario =>
+  (seed) => {
+    const { crews } = days[name](seed);
+    return (crew) => crews[crew % crews.length]! satisfies DayCrew;
+  };
 
 export const scenarios = {
-  steady: () => [steady()],
-  unrest: () => [steady(), unrest(300)],
-  trees: (crew) => [steady(), trees(60 + crew * 7, 120)],
-  'corrections-stopped': (crew) => [steady(), correctionsStopped(60 + crew * 7, 120)],
-  quiet: (crew) => [steady(), quiet(60 + crew * 7, 120)],
-  'never-fixed': () => [steady(), neverCorrected()],
+  steady: plain(() => [steady()]),
+  unrest: plain(() => [steady(), unrest(300)]),
+  'sky-blocked': losing('skyBlocked'),
+  'corrections-stopped': losing('correctionsStopped'),
+  'mount-point-down': losing('mountPointDown'),
+  'far-from-base': losing('farFromBase'),
+  'not-resolving': losing('notResolving'),
+  'no-position': losing('noPosition'),
+  'went-quiet': losing('wentQuiet'),
+  'not-heard': losing('notHeard'),
+  'never-corrected': losing('neverCorrected'),
+  'bad-day': ofDay('bad-day'),
+  'good-day': ofDay('good-day'),
   demo,
 } satisfies Record<string, Scenario>;
 

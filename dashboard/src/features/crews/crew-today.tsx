@@ -38,20 +38,24 @@ export function CrewToday({ crew, onClose }: { crew: Crew; onClose: () => void }
   const done = () => setEditing(null);
   return (
     <Sheet title={`${crew.name} today`} onClose={onClose}>
-      {error && !day && <Failed error={error} retry={() => void refetch()} />}
-      {!day && !error && <Loading what="the day" />}
-      {day && editing === null && (
-        <>
-          <p>
-            {dutyWords[day.duty]} {basisWords[day.basis]}
-          </p>
-          {role !== 'technician' && <Steps crewId={crew.id} day={day} />}
-          <Marks day={day} onEdit={maySetRight ? setEditing : null} />
-          {maySetRight && <Button onClick={() => setEditing('new')}>Add a shift</Button>}
-        </>
-      )}
-      {editing === 'new' && <ShiftForm crewId={crew.id} onDone={done} />}
-      {editing !== null && editing !== 'new' && <ShiftForm crewId={crew.id} shift={editing} onDone={done} />}
+      <div className="crew-today">
+        {error && !day && <Failed error={error} retry={() => void refetch()} />}
+        {!day && !error && <Loading what="the day" />}
+        {day && editing === null && (
+          <>
+            <p>
+              {dutyWords[day.duty]} {basisWords[day.basis]}
+            </p>
+            {role !== 'technician' && <Steps crewId={crew.id} day={day} />}
+            <Marks day={day} onEdit={maySetRight ? setEditing : null} />
+            {maySetRight && <Button onClick={() => setEditing('new')}>Add a shift</Button>}
+          </>
+        )}
+        {editing === 'new' && <ShiftForm crewId={crew.id} onDone={done} />}
+        {editing !== null && editing !== 'new' && (
+          <ShiftForm crewId={crew.id} shift={editing} onDone={done} />
+        )}
+      </div>
     </Sheet>
   );
 }

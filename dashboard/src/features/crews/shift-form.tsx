@@ -16,11 +16,20 @@ import { useMe } from '../../lib/session';
 import { useAddShift, useChangeShift, useRemoveShift } from '../../lib/shifts';
 import { fieldText, instantOf } from './zone-time';
 
-const dateTime = z.string().min(16, 'Write a date and a time');
+const wanted = 'Write a date and a time';
+const dateTime = z.string(wanted).min(16, wanted);
 const shiftFields = z.object({
   start: dateTime,
   end: dateTime.nullable(),
-  pauses: z.array(z.object({ start: dateTime, end: dateTime.nullable(), reason: pauseReason })),
+  pauses: z.array(
+    z.object({
+      start: dateTime,
+      end: dateTime.nullable(),
+      reason: pauseReason,
+      /** As it was marked; lines move when one is removed. */
+      was: z.object({ start: z.number(), end: z.number().nullable() }).nullable(),
+    }),
+  ),
 });
 type ShiftFields = z.infer<typeof shiftFields>;
 
@@ -33,11 +42,11 @@ export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: S
   const remove = useRemoveShift(shift?.id ?? 0);
   const text = (at: number | null) => (at === null ? null : fieldText(at, zone));
   const bodyOf = ({ start, end, pauses }: ShiftFields): ShiftBody => ({
-    start: instantOf(start, zone)!,
-    end: instantOf(end, zone),
+    start: instantOf(start, zone, shift?.start)!,
+    end: instantOf(end, zone, shift?.end),
     pauses: pauses.map((pause) => ({
-      start: instantOf(pause.start, zone)!,
-      end: instantOf(pause.end, zone),
+      start: instantOf(pause.start, zone, pause.was?.start)!,
+      end: instantOf(pause.end, zone, pause.was?.end),
       reason: pause.reason,
     })),
   });
@@ -48,8 +57,12 @@ export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: S
         start: text(shift?.start ?? opened) ?? '',
         end: text(shift?.end ?? null),
         pauses:
-          shift?.pauses.map(({ start, end, reason }) => ({ start: text(start)!, end: text(end), reason })) ??
-          [],
+          shift?.pauses.map(({ start, end, reason }) => ({
+            start: text(start)!,
+            end: text(end),
+            reason,
+            was: { start, end },
+          })) ?? [],
       }}
       button="Save"
       onCancel={onDone}
@@ -79,11 +92,18 @@ export function ShiftForm({ crewId, shift, onDone }: { crewId: number; shift?: S
   );
 }
 
+interface Told {
+  message?: string;
+}
+/** Of the pauses as a whole, or a list with those of each line. */
+type PauseErrors = Told & { root?: Told } & ({ start?: Told; end?: Told } | undefined)[];
+
 function PauseFields() {
   const { formState } = useFormContext();
   const { fields, append, remove } = useFieldArray({ name: 'pauses' });
-  const error = formState.errors.pauses as { message?: string; root?: { message?: string } } | undefined;
-  const message = error?.message ?? error?.root?.message;
+  const error = formState.errors.pauses as PauseErrors | undefined;
+  const line = Array.isArray(error) ? error.find((one) => one?.start ?? one?.end) : undefined;
+  const message = error?.message ?? error?.root?.message ?? (line?.start ?? line?.end)?.message;
   return (
     <fieldset className="pattern">
       <legend>Pauses</legend>
@@ -103,7 +123,9 @@ function PauseFields() {
         </div>
       ))}
       {message && <p role="alert">{message}</p>}
-      <Button onClick={() => append({ start: '', end: null, reason: 'lunch' })}>Add a pause</Button>
+      <Button onClick={() => append({ start: '', end: null, reason: 'lunch', was: null })}>
+        Add a pause
+      </Button>
     </fieldset>
   );
 }
