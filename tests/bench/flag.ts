@@ -10,7 +10,12 @@ const WANTED_MS = 1000;
 /** From the tap to the text on the other page, ms. */
 async function seen(tap: Promise<void>, page: Page, text: string): Promise<number> {
   const began = performance.now();
-  await Promise.all([tap, page.locator('main').getByText(text).first().waitFor()]);
+  // Looked for at every frame: a locator would look ever more seldom.
+  const shown = page.waitForFunction(
+    (words) => document.querySelector('main')?.innerText.includes(words),
+    text,
+  );
+  await Promise.all([tap, shown]);
   return performance.now() - began;
 }
 
@@ -29,7 +34,7 @@ export async function flag(): Promise<Row[]> {
   const toDesk: number[] = [];
   for (let round = 0; round < ROUNDS; round++) {
     await phone.getByRole('button', { name: 'We lost the fix' }).click();
-    await phone.getByText('Under cover').click();
+    await phone.getByRole('dialog').getByText('Under cover').click();
     await phone.getByLabel('Note (may be left empty)').fill(`tree number ${round}`);
     const tap = phone.getByRole('button', { name: 'Tell the office' }).click();
     toDesk.push(await seen(tap, desk, `tree number ${round}`));

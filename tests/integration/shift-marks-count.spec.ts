@@ -158,6 +158,18 @@ describe('marks set right afterwards', () => {
     await dispatcher.json('DELETE', `/api/shifts/${shift.id}`);
     expect((await day()).basis).toBe('pattern');
   });
+  it('leave the name on a pause that nobody touched', async () => {
+    await step('start', '07:10:00');
+    await step('pause', '09:00:00', { reason: 'driving' });
+    await step('resume', '09:20:00');
+    const [shift] = (await day()).shifts as [Shift];
+    server.clock.set(at('17:00:00'));
+    const driving = { start: iso('09:00:00'), end: iso('09:20:00'), reason: 'driving' };
+    const lunch = { start: iso('11:30:00'), end: iso('12:00:00'), reason: 'lunch' };
+    const marks = body('07:10:00', '15:00:00', [lunch, driving]);
+    await dispatcher.json('PUT', `/api/shifts/${shift.id}`, marks);
+    expect((await day()).shifts[0]!.pauses).toMatchObject([{ by: 'crewChief' }, { by: 'dispatcher' }]);
+  });
   it.each([
     ['end before start', body('12:00:00', '11:00:00'), '/end'],
     [

@@ -93,7 +93,7 @@ export class ShiftMarksService {
       const endedBy = endAt === before.end ? before.endedBy : viewer.name;
       tx.update(shifts).set({ startAt, endAt, startedBy, endedBy }).where(eq(shifts.id, id)).run();
       tx.delete(shiftPauses).where(eq(shiftPauses.shiftId, id)).run();
-      this.writePauses(viewer, id, body);
+      this.writePauses(viewer, id, body, before.pauses);
       const subject = this.crew(before.crewId).name;
       this.audit.record(viewer, { action: 'shift.changed', subject, before, after: body });
     });
@@ -257,18 +257,29 @@ export class ShiftMarksService {
     return this.database.insert(shifts).values(values).returning({ id: shifts.id }).get().id;
   }
 
-  private writePauses(viewer: Viewer, shiftId: number, { pauses }: ShiftBody): void {
-    for (const { start, end, reason } of pauses)
+  private writePauses(
+    viewer: Viewer,
+    shiftId: number,
+    { pauses }: ShiftBody,
+    before: Shift['pauses'] = [],
+  ): void {
+    for (const { start, end, reason } of pauses) {
+      const startAt = Date.parse(start);
+      const endAt = end === null ? null : Date.parse(end);
+      const untouched = before.find(
+        (pause) => pause.start === startAt && pause.end === endAt && pause.reason === reason,
+      );
       this.database
         .insert(shiftPauses)
         .values({
           shiftId,
-          startAt: Date.parse(start),
-          endAt: end === null ? null : Date.parse(end),
+          startAt,
+          endAt,
           reason,
-          markedBy: viewer.name,
+          markedBy: untouched ? untouched.by : viewer.name,
         })
         .run();
+    }
   }
 
   private checkFree(crewId: number, body: ShiftBody, ownId: number | null): void {
