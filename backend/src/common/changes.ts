@@ -19,8 +19,27 @@ export class Changes {
   private readonly subject = new Subject<Change>();
   readonly all = this.subject.asObservable();
 
+  /** What waits for the transaction around it; null outside of one. */
+  private held: Change[] | null = null;
+
   announce(change: Change): void {
-    this.subject.next(change);
+    if (this.held) this.held.push(change);
+    else this.subject.next(change);
+  }
+
+  /** Runs a transaction that others announce from within: they are heard once it holds, and not at all when it does not. */
+  onceItHolds<T>(transaction: () => T): T {
+    const outer = this.held;
+    const held: Change[] = [];
+    this.held = held;
+    let result: T;
+    try {
+      result = transaction();
+    } finally {
+      this.held = outer;
+    }
+    for (const change of held) this.announce(change);
+    return result;
   }
 }
 

@@ -13,6 +13,7 @@ import { CommitQueue } from '../fixes/commit.queue.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import { RosterRepository } from '../rovers/roster.repository.js';
 import { SettingsService } from '../settings/settings.service.js';
+import { ShiftsService } from '../shifts/shifts.service.js';
 import { EpisodeKeeper, type Look } from './episode.keeper.js';
 import { isChattering } from './chattering.js';
 import { LostFixRepository } from './lost-fix.repository.js';
@@ -42,6 +43,7 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     private readonly clock: Clock,
     private readonly fixes: FixesService,
     private readonly roster: RosterRepository,
+    private readonly shifts: ShiftsService,
     private readonly settings: SettingsService,
     private readonly lostFixes: LostFixRepository,
     private readonly writer: LostFixWriter,
@@ -147,8 +149,9 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
   }
 
   private setCrewBack(crewId: number, from: number): void {
-    for (const rover of this.rovers.values()) {
-      if (rover.entry.crewId !== crewId) continue;
+    for (const roverId of this.shifts.roversSince(crewId, from)) {
+      const rover = this.rovers.get(roverId);
+      if (!rover) continue;
       rover.shifts = null;
       rover.isStale = true;
       rover.lookedAt = Math.min(rover.lookedAt, from);

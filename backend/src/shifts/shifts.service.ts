@@ -52,6 +52,21 @@ export class ShiftsService {
     });
   }
 
+  /** Rovers that a crew has had since an instant. */
+  roversSince(crewId: number, from: number): number[] {
+    const rows = this.database
+      .selectDistinct({ roverId: roverAssignments.roverId })
+      .from(roverAssignments)
+      .where(
+        and(
+          eq(roverAssignments.crewId, crewId),
+          or(isNull(roverAssignments.endAt), gt(roverAssignments.endAt, from)),
+        ),
+      )
+      .all();
+    return rows.map(({ roverId }) => roverId);
+  }
+
   private heardOn(roverId: number, day: Interval | undefined): Interval | null {
     if (!day) return null;
     const heard = clipSpans(this.fixes.spans(roverId, day.start, day.end), day.start, day.end);

@@ -3,6 +3,7 @@ import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { taps } from '@hubtack/drizzle/schema/taps.js';
 import { and, eq, sql } from 'drizzle-orm';
 import type { Viewer } from '../auth/access.js';
+import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import { conflict, ProblemException } from '../common/problem.exception.js';
 import { DATABASE } from '../database/database.module.js';
@@ -17,6 +18,7 @@ const KEY = /^[\x21-\x7e]{1,100}$/;
 export class TapsService {
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
+    private readonly changes: Changes,
     private readonly clock: Clock,
   ) {}
 
@@ -25,7 +27,11 @@ export class TapsService {
    * just runs. Throws 400 for a key that cannot be one, 409 for a key that was used for something else.
    */
   once<T>(viewer: Viewer, key: string | undefined, request: string, effect: () => T): T {
-    if (key === undefined) return this.database.transaction(effect);
+    if (key === undefined) return this.changes.onceItHolds(() => this.database.transaction(effect));
+    return this.changes.onceItHolds(() => this.keep(viewer, key, request, effect));
+  }
+
+  private keep<T>(viewer: Viewer, key: string, request: string, effect: () => T): T {
     return this.database.transaction((tx) => {
       const known = this.answered<T>(viewer, key, request);
       if (known) return known.answer;
