@@ -1,4 +1,5 @@
 import { defaultLimits, type Limits } from '@hubtack/contracts/lost-fixes/limits.js';
+import { topographic, type ToleranceProfile } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { flag } from './columns.js';
 
@@ -10,5 +11,11 @@ export const firmSettings = sqliteTable('firm_settings', {
   units: text('units', { enum: ['metric', 'feet'] }).notNull(),
   currency: text('currency').notNull(),
   keepPositionsOffShift: flag('keep_positions_off_shift').notNull(),
+  toleranceProfile: text('tolerance_profile', { mode: 'json' })
+    .$type<ToleranceProfile>()
+    .notNull()
+    .default(topographic),
+  /** Local hour of Monday at which the week goes out by mail. */
+  weeklyMailHour: integer('weekly_mail_hour').notNull().default(7),
   limits: text('limits', { mode: 'json' }).$type<Limits>().notNull().default(defaultLimits),
 });

@@ -45,6 +45,8 @@ export const lostFixes = sqliteTable(
     index('lost_fixes_rover').on(table.roverId, table.startAt),
     // The history of a crew, and its day.
     index('lost_fixes_crew').on(table.crewId, table.startAt),
+    // The lost fixes of a week.
+    index('lost_fixes_start').on(table.startAt),
     // The history of a mount point.
     index('lost_fixes_mount_point').on(table.mountPoint, table.startAt),
     // What hangs under a mount point's lost fix.

@@ -12,6 +12,8 @@ const queries: [index: string, sql: string][] = [
   ['shift_pauses_shift', 'SELECT * FROM shift_pauses WHERE shift_id IN (1, 2)'],
   ['lost_fixes_rover', 'SELECT * FROM lost_fixes WHERE rover_id = 1 AND start_at >= 5 AND start_at < 9'],
   ['lost_fixes_crew', 'SELECT * FROM lost_fixes WHERE crew_id = 1 AND start_at < 9'],
+  ['lost_fixes_start', 'SELECT * FROM lost_fixes WHERE start_at >= 5 AND start_at < 9'],
+  ['shift_figures_week', "SELECT * FROM shift_figures WHERE week = '2026-W49'"],
   ['lost_fixes_mount_point', "SELECT * FROM lost_fixes WHERE mount_point = 'TANF00' AND start_at < 9"],
   ['lost_fixes_shared', 'SELECT * FROM lost_fixes WHERE shared_id = 1'],
   ['lost_fixes_active', 'SELECT * FROM lost_fixes WHERE end_at IS NULL AND closed_at IS NULL'],

@@ -1,6 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { defaultLimits } from '@hubtack/contracts/lost-fixes/limits.js';
 import type { Settings, SettingsBody } from '@hubtack/contracts/settings/settings.js';
+import { topographic } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { firmSettings } from '@hubtack/drizzle/schema/firm-settings.js';
 import { AuditService } from '../audit/audit.service.js';
@@ -17,6 +18,8 @@ const defaults: Settings = {
   currency: 'AUD',
   keepPositionsOffShift: false,
   limits: defaultLimits,
+  toleranceProfile: topographic,
+  weeklyMailHour: 7,
 };
 
 @Injectable()
@@ -36,7 +39,12 @@ export class SettingsService {
 
   change(viewer: Viewer, body: SettingsBody): Settings {
     const before = this.get();
-    const settings: Settings = { ...body, limits: body.limits ?? before.limits };
+    const settings: Settings = {
+      ...body,
+      limits: body.limits ?? before.limits,
+      toleranceProfile: body.toleranceProfile ?? before.toleranceProfile,
+      weeklyMailHour: body.weeklyMailHour ?? before.weeklyMailHour,
+    };
     this.database.transaction((tx) => {
       tx.insert(firmSettings)
         .values({ id: ONLY_ROW, ...settings })

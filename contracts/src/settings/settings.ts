@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { shortText } from '../common.js';
 import { limits } from '../lost-fixes/limits.js';
+import { toleranceProfile } from '../weekly/tolerance-profile.js';
 
 const isTimeZone = (zone: string): boolean => {
   try {
@@ -19,8 +20,10 @@ export const settings = z.object({
   /** Positions outside on-shift time are personal data and are dropped unless the firm says otherwise. */
   keepPositionsOffShift: z.boolean(),
   limits,
+  toleranceProfile,
+  weeklyMailHour: z.number().int('A whole hour').min(0).max(23),
 });
 export type Settings = z.infer<typeof settings>;
-/** Limits that are left out stay as they are. */
-export const settingsBody = settings.partial({ limits: true });
+/** What is left out stays as it is. */
+export const settingsBody = settings.partial({ limits: true, toleranceProfile: true, weeklyMailHour: true });
 export type SettingsBody = z.infer<typeof settingsBody>;
