@@ -27,6 +27,7 @@ import { SettingsModule } from './settings/settings.module.js';
 import { SitesModule } from './sites/sites.module.js';
 import { TapsModule } from './taps/taps.module.js';
 import { UsersModule } from './users/users.module.js';
+import { WeeklyModule } from './weekly/weekly.module.js';
 
 @Module({})
 export class AppModule {
@@ -56,6 +57,7 @@ export class AppModule {
         LostFixesModule,
         PhotosModule,
         CrewDayModule,
+        WeeklyModule,
         NoticesModule,
         BoardModule,
         HealthModule,

@@ -10,6 +10,7 @@ import { roverAssignments, rovers } from '../schema/rovers.js';
 import { shiftPauses, shifts } from '../schema/shifts.js';
 import { sites } from '../schema/sites.js';
 import { spans } from '../schema/spans.js';
+import { toleranceSpans } from '../schema/tolerance-spans.js';
 import { users } from '../schema/users.js';
 import { DEMO_MAIL_DOMAIN } from './demo-accounts.js';
 import {
@@ -42,6 +43,8 @@ const SEED = 20_261_201;
 /** Today's shift began this long before the demo, so that the board is full at whatever hour it is started. */
 const TODAY_BEGAN_MS = 2 * 3_600_000;
 const MINUTE = 60_000;
+/** Invented: no raw epochs of the past are stored that would tell when a fix was within tolerance. */
+const WITHIN_AFTER_MS = 40_000;
 
 /** Fills an empty database with the demo firm and twelve past weeks. One transaction: all of it or nothing. */
 export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
@@ -112,7 +115,15 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
             .run();
         for (const roverId of roverIds) {
           const rows = spansOfShift(random, crew, shift, seed.toSpans).map((span) => ({ roverId, ...span }));
-          if (rows.length > 0) tx.insert(spans).values(rows).run();
+          if (rows.length === 0) continue;
+          tx.insert(spans).values(rows).run();
+          const within = rows.filter(
+            ({ state, start: at, end }) => state === 'fixed' && end - at > WITHIN_AFTER_MS,
+          );
+          for (const { start: at, end } of within)
+            tx.insert(toleranceSpans)
+              .values({ roverId, start: at + WITHIN_AFTER_MS, end })
+              .run();
         }
       }
     }

@@ -20,10 +20,10 @@ const runMs = (random: RandomGenerator, meanMinutes: number): number =>
 function nextKind(random: RandomGenerator, kind: Kind): { kind: Kind; meanMinutes: number } {
   if (kind !== 'fixed') return { kind: 'fixed', meanMinutes: 0 };
   const dice = share(random);
-  if (dice < 0.55) return { kind: 'float', meanMinutes: 3 };
-  if (dice < 0.75) return { kind: 'code', meanMinutes: 4 };
-  if (dice < 0.8) return { kind: 'none', meanMinutes: 1.5 };
-  return { kind: 'silent', meanMinutes: 5 };
+  if (dice < 0.55) return { kind: 'float', meanMinutes: 9 };
+  if (dice < 0.75) return { kind: 'code', meanMinutes: 12 };
+  if (dice < 0.8) return { kind: 'none', meanMinutes: 4 };
+  return { kind: 'silent', meanMinutes: 14 };
 }
 
 /**
@@ -37,7 +37,7 @@ export function epochsOfShift(
   trouble: number,
 ): TimedQuality[] {
   const epochs: TimedQuality[] = [];
-  const fixedMinutes = 3.2 * (1 / Math.max(trouble, 0.01) - 1);
+  const fixedMinutes = 9.6 * (1 / Math.max(trouble, 0.01) - 1);
   let kind: Kind = 'float';
   let until = start + runMs(random, 1.5);
   for (let time = start; time < end; time += STEP_MS) {

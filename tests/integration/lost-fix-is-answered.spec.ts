@@ -178,14 +178,16 @@ describe('a chief’s flag', () => {
     const step = await chief.call('POST', `/api/crews/${crewId}/shift/start`, {}, key);
     expect(step.status).toBe(409);
   });
-  it('keeps the time of the tap; times to come and of the day before yesterday are refused', async () => {
+  it('keeps the time of the tap; a clock that is ahead means now; one that is days off is refused', async () => {
     await report(0, 60, 4);
     await report(60, 70, 4);
     const tapped = new Date(NINE + 20 * S).toISOString();
     expect(await (await flag('underCover', { at: tapped })).json()).toMatchObject({
       flag: { at: NINE + 20 * S },
     });
-    for (const at of ['2026-12-02T10:00:00Z', '2026-11-30T20:00:00Z'])
+    const ahead = await flag('underCover', { at: '2026-12-02T10:00:00Z' });
+    expect(((await ahead.json()) as LostFix).flag!.at).toBe(server.clock.now());
+    for (const at of ['2026-12-04T10:00:00Z', '2026-11-30T20:00:00Z'])
       expect((await flag('underCover', { at })).status, at).toBe(400);
   });
 });

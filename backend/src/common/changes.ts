@@ -5,8 +5,10 @@ import { Subject } from 'rxjs';
 export type Change =
   /** Names, assignments, sites, patterns, shifts or settings changed: lanes are described anew. */
   | { kind: 'firm' }
-  /** Shift marks of a crew changed, from this instant on. */
-  | { kind: 'marks'; crewId: number; from: number }
+  /** Shift marks of a crew changed, between these instants. */
+  | { kind: 'marks'; crewId: number; from: number; to: number }
+  /** A rover went to another crew, or to none, from this instant on. */
+  | { kind: 'assignment'; roverId: number; from: number }
   /** What is known of these lost fixes changed. */
   | { kind: 'lostFix'; lostFixIds: number[] }
   /** A rover's keys changed. */

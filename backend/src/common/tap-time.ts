@@ -1,7 +1,7 @@
 import { ProblemException } from './problem.exception.js';
 
-/** A phone's clock may be ahead by this much. */
-const AHEAD_MS = 60_000;
+/** A phone whose clock is ahead means now; one that is a day ahead, nobody knows when. */
+const AHEAD_MS = 24 * 3_600_000;
 /** What was tapped without signal comes within this time, or not at all. */
 const BEHIND_MS = 36 * 3_600_000;
 

@@ -1,6 +1,7 @@
 import { Module } from '@nestjs/common';
 import { CommitQueue } from './commit.queue.js';
 import { EpochRepository } from './epoch.repository.js';
+import { FiguresToDo } from './figures-to-do.repository.js';
 import { FixesController } from './fixes.controller.js';
 import { FixesService } from './fixes.service.js';
 import { RoverAccessService } from './rover-access.service.js';
@@ -15,11 +16,12 @@ import { TrackStore } from './track.store.js';
     EpochRepository,
     SpanRepository,
     TrackStore,
+    FiguresToDo,
     TimelineWriter,
     CommitQueue,
     FixesService,
     RoverAccessService,
   ],
-  exports: [CommitQueue, FixesService],
+  exports: [CommitQueue, FixesService, FiguresToDo],
 })
 export class FixesModule {}

@@ -43,6 +43,11 @@ export class FixesService {
     return this.tracks.get(roverId).tail?.lastTime ?? null;
   }
 
+  /** Start of the first span ever, ms UTC; null when never heard. */
+  firstHeardAt(roverId: number): number | null {
+    return this.tracks.firstHeardAt(roverId);
+  }
+
   /** Until when the newest epoch speaks for the rover, ms UTC; null when never heard. */
   heldUntil(roverId: number): number | null {
     const lastTime = this.lastHeardAt(roverId);

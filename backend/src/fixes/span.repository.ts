@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { spans } from '@hubtack/drizzle/schema/spans.js';
-import { and, eq, sql } from 'drizzle-orm';
+import { and, eq, sql, type SQL } from 'drizzle-orm';
 import { DATABASE } from '../database/database.module.js';
 import type { HeardSpan } from './timeline.js';
 
@@ -54,12 +54,20 @@ export class SpanRepository {
     return this.windowStatement.all({ roverId, from, to }).filter((span) => span.end >= from);
   }
 
+  first(roverId: number): HeardSpan | undefined {
+    return this.outermost(roverId, sql`${spans.start} ASC`);
+  }
+
   last(roverId: number): HeardSpan | undefined {
+    return this.outermost(roverId, sql`${spans.start} DESC`);
+  }
+
+  private outermost(roverId: number, order: SQL): HeardSpan | undefined {
     return this.database
       .select({ state: spans.state, start: spans.start, end: spans.end })
       .from(spans)
       .where(eq(spans.roverId, roverId))
-      .orderBy(sql`${spans.start} DESC`)
+      .orderBy(order)
       .limit(1)
       .get();
   }

@@ -1,6 +1,7 @@
 import { Injectable } from '@nestjs/common';
 import type { Epoch, LateSigmas } from './epoch.js';
 import { EpochRepository } from './epoch.repository.js';
+import { FiguresToDo } from './figures-to-do.repository.js';
 import { stretchesOf, type LateStretch } from './late-epochs.js';
 import { CHECKPOINT_MS, type RoverTrack } from './rover-track.js';
 import { SpanRepository } from './span.repository.js';
@@ -45,6 +46,7 @@ export class TimelineWriter {
     private readonly epochs: EpochRepository,
     private readonly spans: SpanRepository,
     private readonly tracks: TrackStore,
+    private readonly toDo: FiguresToDo,
   ) {}
 
   begin(): void {
@@ -74,6 +76,7 @@ export class TimelineWriter {
       const change = this.changeOf(roverId);
       for (const stretch of stretchesOf(times, 2 * HOLD_MS)) {
         this.correct(change, stretch);
+        this.toDo.add({ roverId, start: stretch.first, end: stretch.last + HOLD_MS });
         change.lateFrom = Math.min(change.lateFrom ?? Infinity, stretch.first);
       }
     }

@@ -27,6 +27,10 @@ export class TrackStore {
     this.tracks.set(roverId, track);
   }
 
+  firstHeardAt(roverId: number): number | null {
+    return this.spans.first(roverId)?.start ?? this.get(roverId).tail?.start ?? null;
+  }
+
   /** Spans that overlap or touch [from, to], the growing run as it really stands included. */
   spansOf(roverId: number, from: number, to: number): HeardSpan[] {
     return withTail(this.spans.window(roverId, from, to), this.get(roverId).tail, from, to);

@@ -75,6 +75,20 @@ export function episodesOf(
     .filter((episode) => episode !== null);
 }
 
+/** First report of a shift, and the start of its first fix that holds; null while there is none. */
+export function firstFixOf(
+  spans: readonly HeardSpan[],
+  duty: DutyTime,
+  now: number,
+  limits: Pick<DetectorLimits, 'regainedAfterMs'>,
+): { reportedAt: number; fixedAt: number } | null {
+  const worked = clip(duty.onShift, { start: -Infinity, end: Math.min(now, duty.end ?? now) });
+  const parts = worked.flatMap(({ start, end }) => partition(spans, start, end, now));
+  const report = parts.find(({ state }) => state !== 'silent');
+  const fix = runsOf(parts).find((run) => run.isFixed && totalMs(run.pieces) >= limits.regainedAfterMs);
+  return report && fix ? { reportedAt: report.start, fixedAt: startOf(fix) } : null;
+}
+
 function runsOf(parts: readonly { state: string; start: number; end: number }[]): Run[] {
   const runs: Run[] = [];
   for (const { state, start, end } of parts) {

@@ -1,5 +1,8 @@
-import { Injectable } from '@nestjs/common';
+import { Inject, Injectable } from '@nestjs/common';
+import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import { baseDistance } from '../common/base-distance.js';
+import { ENVIRONMENT } from '../config/config.module.js';
+import type { Environment } from '../config/environment.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { Episode } from './detector.js';
 import type { Evidence, EvidenceEpoch } from './diagnosis.js';
@@ -20,7 +23,14 @@ export class EvidenceReader {
   /** For each rover's shift: up to where its epochs have been looked through, and when corrections first came. */
   private readonly looked = new Map<number, { shiftStart: number; until: number; at: number | null }>();
 
-  constructor(private readonly fixes: FixesService) {}
+  private readonly rawMs: number;
+
+  constructor(
+    private readonly fixes: FixesService,
+    @Inject(ENVIRONMENT) environment: Environment,
+  ) {
+    this.rawMs = environment.RAW_EPOCH_DAYS * DAY_MS;
+  }
 
   read(
     roverId: number,
@@ -32,6 +42,18 @@ export class EvidenceReader {
   ): Evidence {
     const { kind, start, end } = episode;
     const until = end ?? now;
+    // Raw epochs of that time are gone: there is nothing to look through.
+    if (until < now - this.rawMs)
+      return {
+        kind,
+        start,
+        now: until,
+        before: [],
+        since: [],
+        correctedAt: null,
+        baseDistanceM: null,
+        outage,
+      };
     const before =
       kind === 'notHeard' ? [] : this.fixes.epochs(roverId, Math.max(start - BEFORE_MS, shiftStart), start);
     return {

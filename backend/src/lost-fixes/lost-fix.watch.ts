@@ -61,6 +61,7 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     this.changes.all.subscribe((change) => {
       if (change.kind === 'firm') this.isRosterStale = true;
       if (change.kind === 'marks') this.setCrewBack(change.crewId, change.from);
+      if (change.kind === 'assignment') this.forgetShifts(change.roverId, change.from);
     });
     this.timer = setInterval(() => this.sweep(), SWEEP_MS);
   }
@@ -149,13 +150,15 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
   }
 
   private setCrewBack(crewId: number, from: number): void {
-    for (const roverId of this.shifts.roversSince(crewId, from)) {
-      const rover = this.rovers.get(roverId);
-      if (!rover) continue;
-      rover.shifts = null;
-      rover.isStale = true;
-      rover.lookedAt = Math.min(rover.lookedAt, from);
-    }
+    for (const roverId of this.shifts.roversSince(crewId, from)) this.forgetShifts(roverId, from);
+  }
+
+  private forgetShifts(roverId: number, from: number): void {
+    const rover = this.rovers.get(roverId);
+    if (!rover) return;
+    rover.shifts = null;
+    rover.isStale = true;
+    rover.lookedAt = Math.min(rover.lookedAt, from);
   }
 
   /** What only the clock brings about: the end of a shelf, the end of chattering. */

@@ -31,6 +31,6 @@ import { OutageKeeper } from './outage.keeper.js';
     NearMountPoints,
     LostFixesService,
   ],
-  exports: [LostFixesService, LostFixAccess, LostFixRepository, LostFixWatch],
+  exports: [EpisodeKeeper, LostFixesService, LostFixAccess, LostFixRepository, LostFixWatch],
 })
 export class LostFixesModule {}

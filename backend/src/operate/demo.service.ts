@@ -13,6 +13,7 @@ import { eq } from 'drizzle-orm';
 import { PasswordService } from '../auth/password.service.js';
 import { hashOfToken, newToken } from '../auth/tokens.js';
 import { Clock } from '../common/clock.js';
+import { DemoPastService } from './demo-past.service.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
 import { DATABASE } from '../database/database.module.js';
@@ -27,6 +28,7 @@ export class DemoService implements OnModuleInit {
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     @Inject(ENVIRONMENT) private readonly environment: Environment,
     private readonly passwords: PasswordService,
+    private readonly past: DemoPastService,
     private readonly clock: Clock,
   ) {}
 
@@ -37,6 +39,7 @@ export class DemoService implements OnModuleInit {
     const began = performance.now();
     seedDemoFirm(this.database, { now: this.clock.now(), passwordHash, toSpans: spansOf });
     this.writeKeys();
+    this.past.fill();
     this.logger.log({ seconds: Math.round(performance.now() - began) / 1000 }, 'demo firm seeded');
   }
 

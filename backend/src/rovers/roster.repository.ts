@@ -54,4 +54,15 @@ export class RosterRepository {
       .where(eq(rovers.retired, false))
       .all();
   }
+
+  /** The mount point that a rover takes its corrections from; null without one. */
+  mountPointOf(roverId: number): string | null {
+    const row = this.database
+      .select({ mountPoint: correctionSources.mountPoint })
+      .from(rovers)
+      .innerJoin(correctionSources, eq(correctionSources.id, rovers.correctionSourceId))
+      .where(eq(rovers.id, roverId))
+      .get();
+    return row?.mountPoint ?? null;
+  }
 }

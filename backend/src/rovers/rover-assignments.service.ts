@@ -79,6 +79,7 @@ export class RoverAssignmentsService {
         after: { crew: crewName, startAt: iso(startAt) },
       });
     });
+    this.changes.announce({ kind: 'assignment', roverId, from: startAt });
     this.changes.announce({ kind: 'firm' });
     return this.list(roverId);
   }

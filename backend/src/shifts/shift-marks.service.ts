@@ -60,7 +60,7 @@ export class ShiftMarksService {
       if ('refusal' in result) throw conflict(result.refusal);
       this.write(viewer, crewId, result.effect);
     });
-    this.announce(crewId, at);
+    this.announce(crewId, at, null);
   }
 
   add(viewer: Viewer, crewId: number, body: ShiftBody): Shift {
@@ -79,7 +79,7 @@ export class ShiftMarksService {
       this.audit.record(viewer, { action: 'shift.added', subject: this.crew(crewId).name, after: body });
       return added;
     });
-    this.announce(crewId, Date.parse(body.start));
+    this.announce(crewId, Date.parse(body.start), body.end);
     return this.get(id);
   }
 
@@ -97,7 +97,8 @@ export class ShiftMarksService {
       const subject = this.crew(before.crewId).name;
       this.audit.record(viewer, { action: 'shift.changed', subject, before, after: body });
     });
-    this.announce(before.crewId, Math.min(before.start, Date.parse(body.start)));
+    const end = before.end === null || body.end === null ? null : Math.max(before.end, Date.parse(body.end));
+    this.announce(before.crewId, Math.min(before.start, Date.parse(body.start)), end);
     return this.get(id);
   }
 
@@ -108,7 +109,7 @@ export class ShiftMarksService {
       const subject = this.crew(before.crewId).name;
       this.audit.record(viewer, { action: 'shift.removed', subject, before });
     });
-    this.announce(before.crewId, before.start);
+    this.announce(before.crewId, before.start, before.end);
   }
 
   private get(id: number): Shift {
@@ -312,10 +313,14 @@ export class ShiftMarksService {
     if (overlap) refuse('/pauses', 'Pauses overlap.');
   }
 
-  private announce(crewId: number, from: number): void {
+  /** `to`: where what changed ends; null: now. */
+  private announce(crewId: number, from: number, to: number | string | null): void {
     // A day's first mark takes the whole of its pattern away, its last one gone brings it back.
-    const { start } = localDayOf(from, this.settings.get().timeZone);
-    this.changes.announce({ kind: 'marks', crewId, from: start });
+    const zone = this.settings.get().timeZone;
+    const last = typeof to === 'string' ? Date.parse(to) : (to ?? this.clock.now());
+    const { start } = localDayOf(from, zone);
+    const { end } = localDayOf(last, zone);
+    this.changes.announce({ kind: 'marks', crewId, from: start, to: end });
     this.changes.announce({ kind: 'firm' });
   }
 }

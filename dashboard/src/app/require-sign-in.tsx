@@ -10,7 +10,8 @@ export function RequireSignIn({ children }: { children: ReactNode }) {
   const { data: me, error, isPending, refetch } = useQuery(meQuery);
   const location = useLocation();
   if (isPending) return <Loading what="your sign-in" />;
-  if (error) return <Failed error={error} retry={() => void refetch()} />;
+  // A re-reading that fails in the background leaves the page as it is.
+  if (error && me === undefined) return <Failed error={error} retry={() => void refetch()} />;
   if (!me) return <Navigate to="/sign-in" replace state={{ from: location.pathname }} />;
   if (me.role === 'display' && location.pathname !== '/wall') return <Navigate to="/wall" replace />;
   return <LiveProvider>{children}</LiveProvider>;

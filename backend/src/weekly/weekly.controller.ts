@@ -1,0 +1,20 @@
+import { Controller, Get, Query } from '@nestjs/common';
+import { ApiOkResponse, ApiTags } from '@nestjs/swagger';
+import { weekly, weeklyQuery, type Weekly, type WeeklyQuery } from '@hubtack/contracts/weekly/weekly.js';
+import { AllowRoles, CurrentViewer, type Viewer } from '../auth/access.js';
+import { WeeklyService } from './weekly.service.js';
+
+@ApiTags('weekly')
+@Controller('weekly')
+export class WeeklyController {
+  constructor(private readonly service: WeeklyService) {}
+
+  /** An ISO week in the firm's zone, this one when none is asked for. Money is the manager's business. */
+  @Get()
+  @AllowRoles('dispatcher', 'technician')
+  @ApiOkResponse({ standardSchema: weekly })
+  week(@CurrentViewer() viewer: Viewer, @Query({ schema: weeklyQuery }) query: WeeklyQuery): Weekly {
+    const week = query.week ?? this.service.thisWeek();
+    return this.service.week(week, viewer.role === 'manager', query.compare);
+  }
+}
