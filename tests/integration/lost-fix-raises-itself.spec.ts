@@ -162,7 +162,11 @@ describe('a mount point that fails', () => {
     expect(shared[0]).toMatchObject({ mountPoint: 'TANF00', members: 3, startAt: NINE + 98 * S });
     expect(shared[0]!.raisedAt - shared[0]!.startAt).toBeLessThan(42 * S);
     const members = list.filter(({ sharedId }) => sharedId === shared[0]!.id);
-    expect(members.map(({ crewName }) => crewName!).toSorted((a, b) => a.localeCompare(b))).toEqual(['Alder', 'Banksia', 'Dogwood']);
+    expect(members.map(({ crewName }) => crewName!).toSorted((a, b) => a.localeCompare(b))).toEqual([
+      'Alder',
+      'Banksia',
+      'Dogwood',
+    ]);
     for (const { diagnosis } of members) expect(diagnosis!.cause).toBe('mountPointDown');
     // The fourth lost its fix as well, with good corrections: another reason, on its own.
     expect(list.find(({ crewName }) => crewName === 'Currawong')).toMatchObject({

@@ -112,19 +112,21 @@ export class EpisodeKeeper {
       end: endAt,
       isWithdrawn: ending === 'withdrawn',
     }));
-    const shiftOf = (episode: Episode) => found.find((one) => one.episode === episode)!.shift;
+    const shifts = new Map(found.map(({ episode, shift }) => [episode, shift]));
+    const shiftOf = (episode: Episode) => shifts.get(episode)!;
+    const byId = new Map(rows.map((row) => [row.id, row]));
     const result = reconcile(
       stored,
       found.map(({ episode }) => episode),
     );
     const isPaused = !isWorking(rover, look.now, this.fixes.heldUntil(rover.entry.roverId));
     for (const { id, episode } of result.keep) {
-      const row = rows.find((one) => one.id === id)!;
+      const row = byId.get(id)!;
       const hasChanged = this.writer.follow(row, episode, isPaused);
       if (hasChanged || this.diagnosis.isDue(row, look.now))
         this.diagnosis.renew(rover, { ...row, ...this.lostFixes.row(id)! }, episode, shiftOf(episode), look);
     }
-    for (const id of result.withdraw) this.writer.withdraw(rows.find((row) => row.id === id)!);
+    for (const id of result.withdraw) this.writer.withdraw(byId.get(id)!);
     for (const episode of result.insert) this.raise(rover, episode, shiftOf(episode), look);
   }
 

@@ -34,7 +34,7 @@ interface Pair {
  */
 export function reconcile(stored: readonly StoredEpisode[], episodes: readonly Episode[]): Reconciled {
   const pairs = stored
-    .flatMap((row) => episodes.map((episode) => pairOf(row, episode)))
+    .flatMap((row) => nearTo(row, episodes))
     .filter((pair) => pair.overlapMs >= 0)
     .toSorted(
       (a, b) =>
@@ -59,6 +59,23 @@ export function reconcile(stored: readonly StoredEpisode[], episodes: readonly E
       .filter((row) => !usedIds.has(row.id) && row.kind !== 'flag' && !row.isWithdrawn)
       .map(({ id }) => id),
   };
+}
+
+/** Episodes come in order and do not overlap: those that a row may be are neighbours. */
+function nearTo(row: StoredEpisode, episodes: readonly Episode[]): Pair[] {
+  const slack = row.kind === 'flag' ? FLAG_BEFORE_MS : 0;
+  const last = row.kind === 'flag' ? row.start : (row.end ?? Infinity);
+  let low = 0;
+  let high = episodes.length;
+  while (low < high) {
+    const middle = (low + high) >> 1;
+    if ((episodes[middle]!.end ?? Infinity) < row.start - slack) low = middle + 1;
+    else high = middle;
+  }
+  const pairs: Pair[] = [];
+  for (let at = low; at < episodes.length && episodes[at]!.start <= last + slack; at++)
+    pairs.push(pairOf(row, episodes[at]!));
+  return pairs;
 }
 
 /** Overlap below zero: they do not touch. */

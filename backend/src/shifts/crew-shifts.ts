@@ -59,7 +59,8 @@ export function crewShiftsOf(
   const planned: Interval[] = [];
   const unset: CrewShift[] = [];
   for (const day of days) {
-    const { basis, onShift } = crewDayOf(day, marks, pattern, zone);
+    const ofDay = marks.filter((mark) => overlaps(mark, day));
+    const { basis, onShift } = crewDayOf(day, ofDay, pattern, zone);
     if (basis === 'pattern') planned.push(...onShift);
     const heard = basis === 'noShiftSet' ? heardOn(day) : null;
     if (heard) unset.push({ basis: 'noShiftSet', ...heard, onShift: [heard], pauses: [] });

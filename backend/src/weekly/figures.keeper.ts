@@ -38,6 +38,27 @@ const LOOKED_BACK_MS = 2 * DAY_MS;
 /** A longer stretch is worked out in pieces, so that no tick takes long. */
 const PIECE_MS = 3 * DAY_MS;
 
+/** Stretches of a rover that lie close together, worked out as one. */
+interface Work extends ToDo {
+  parts: ToDo[];
+}
+
+const CLOSE_MS = DAY_MS;
+
+function together(list: readonly ToDo[]): Work[] {
+  const works: Work[] = [];
+  for (const one of list.toSorted((a, b) => a.roverId - b.roverId || a.start - b.start)) {
+    const last = works.at(-1);
+    const joins =
+      last?.roverId === one.roverId && one.start - last.end < CLOSE_MS && one.end - last.start <= PIECE_MS;
+    if (joins) {
+      last.end = Math.max(last.end, one.end);
+      last.parts.push(one);
+    } else works.push({ ...one, parts: [one] });
+  }
+  return works;
+}
+
 /** Keeps the figures of every rover-shift: of the past when it changes, within seconds; of today every half minute. */
 @Injectable()
 export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationShutdown {
@@ -89,7 +110,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
   tick(budgetMs: number): boolean {
     const until = performance.now() + budgetMs;
     try {
-      for (const one of this.toDo.some(200)) {
+      for (const one of together(this.toDo.some(500))) {
         this.work(one);
         if (performance.now() > until) return true;
       }
@@ -138,11 +159,11 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     const now = this.clock.now();
     const known = this.live.get(roverId) ?? { at: 0, from: now - LOOKED_BACK_MS };
     if (now - known.at < freshMs) return;
-    this.work({ roverId, start: known.from, end: now });
+    this.work({ roverId, start: known.from, end: now, parts: [] });
     this.live.set(roverId, { at: now, from: now - HOLD_MS });
   }
 
-  private work(one: ToDo): void {
+  private work(one: Work): void {
     const { timeZone: zone } = this.settings.get();
     const weeks = new Set<string>();
     this.database.transaction(() => {
@@ -150,7 +171,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
       this.writeWithin(one.roverId, window);
       const shifts = this.shifts.roverShifts(one.roverId, window, zone);
       for (const day of this.daysOf(window, shifts, zone)) weeks.add(this.writeDay(one.roverId, day, zone));
-      this.toDo.done(one);
+      for (const part of one.parts) this.toDo.done(part);
     });
     for (const week of weeks) this.touchedWeeks.next(week);
   }
