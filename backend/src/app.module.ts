@@ -24,6 +24,7 @@ import { OperateModule } from './operate/operate.module.js';
 import { PhotosModule } from './photos/photos.module.js';
 import { RoversModule } from './rovers/rovers.module.js';
 import { SettingsModule } from './settings/settings.module.js';
+import { SheetsModule } from './sheets/sheets.module.js';
 import { SitesModule } from './sites/sites.module.js';
 import { TapsModule } from './taps/taps.module.js';
 import { UsersModule } from './users/users.module.js';
@@ -58,6 +59,7 @@ export class AppModule {
         PhotosModule,
         CrewDayModule,
         WeeklyModule,
+        SheetsModule,
         NoticesModule,
         BoardModule,
         HealthModule,

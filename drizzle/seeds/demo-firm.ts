@@ -10,6 +10,7 @@ import { roverAssignments, rovers } from '../schema/rovers.js';
 import { shiftPauses, shifts } from '../schema/shifts.js';
 import { sites } from '../schema/sites.js';
 import { spans } from '../schema/spans.js';
+import { subscriptions } from '../schema/subscriptions.js';
 import { toleranceSpans } from '../schema/tolerance-spans.js';
 import { users } from '../schema/users.js';
 import { DEMO_MAIL_DOMAIN } from './demo-accounts.js';
@@ -81,6 +82,7 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
         })
         .run();
     addUser('Manager', 'manager', 'manager', null);
+    tx.insert(subscriptions).values({ userId: 1, sheet: 'weekly' }).run();
     addUser('Dispatcher', 'dispatcher', 'dispatcher', null);
     addUser('Technician', 'technician', 'technician', null);
     const receiver = 'dual-frequency receiver';

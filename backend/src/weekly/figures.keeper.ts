@@ -33,8 +33,9 @@ const TICK_MS = 1000;
 const BUDGET_MS = 40;
 /** Figures of today are at most this old. */
 const FRESH_MS = 30_000;
-/** After a start, this far back is worked out again. */
+/** After a start, a rover that has no figures yet is worked out from this long ago; one that has, from its last day. */
 const LOOKED_BACK_MS = 2 * DAY_MS;
+const LONGEST_BACK_MS = 60 * DAY_MS;
 /** A longer stretch is worked out in pieces, so that no tick takes long. */
 const PIECE_MS = 3 * DAY_MS;
 
@@ -157,10 +158,19 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
 
   private refresh(roverId: number, freshMs: number): void {
     const now = this.clock.now();
-    const known = this.live.get(roverId) ?? { at: 0, from: now - LOOKED_BACK_MS };
+    const known = this.live.get(roverId) ?? { at: 0, from: this.workedOutTo(roverId) };
     if (now - known.at < freshMs) return;
     this.work({ roverId, start: known.from, end: now, parts: [] });
     this.live.set(roverId, { at: now, from: now - HOLD_MS });
+  }
+
+  /** Where to begin after a start: the last day that has rows may have been worked out before it was over. */
+  private workedOutTo(roverId: number): number {
+    const day = this.figures.lastDay(roverId);
+    const now = this.clock.now();
+    if (day === null) return now - LOOKED_BACK_MS;
+    const { timeZone: zone } = this.settings.get();
+    return Math.max(DateTime.fromISO(day, { zone }).toMillis(), now - LONGEST_BACK_MS);
   }
 
   private work(one: Work): void {

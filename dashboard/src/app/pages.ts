@@ -11,6 +11,7 @@ const pages: readonly PageEntry[] = [
   { path: '/my-crew', name: 'My crew', roles: ['crewChief'] },
   { path: '/', name: 'Board', roles: ['dispatcher', 'technician', 'crewChief'] },
   { path: '/lost-fixes', name: 'Lost fixes', roles: ['dispatcher', 'technician'] },
+  { path: '/weekly', name: 'Weekly', roles: ['dispatcher', 'technician'] },
   { path: '/crews', name: 'Crews', roles: ['dispatcher', 'technician'] },
   { path: '/rovers', name: 'Rovers', roles: ['dispatcher', 'technician'] },
   { path: '/corrections', name: 'Corrections', roles: ['dispatcher', 'technician'] },

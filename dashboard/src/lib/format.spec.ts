@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { clockTimeSeconds, distance, duration, zoneName } from './format';
+import { clockTimeSeconds, distance, duration, hours, zoneName } from './format';
 
 describe('times and lengths as people read them', () => {
   it.each([
@@ -23,4 +23,12 @@ describe('times and lengths as people read them', () => {
     expect([distance(640, 'metric'), distance(8400, 'metric')]).toEqual(['640 m', '8.4 km']);
     expect([distance(100, 'feet'), distance(8400, 'feet')]).toEqual(['328 ft', '5.2 mi']);
   });
+});
+
+it('working time is told in hours, never in days', () => {
+  expect([hours(238.25 * 3_600_000), hours(41 * 60_000), hours(0)]).toEqual([
+    '238 h 15 min',
+    '41 min',
+    '0 s',
+  ]);
 });

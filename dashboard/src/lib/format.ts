@@ -55,6 +55,12 @@ export function duration(ms: number): string {
   return `${Math.floor(hours / 24)} d ${hours % 24} h`;
 }
 
+/** Working time: hours and minutes, never days. 238 h 15 min, 41 min. */
+export function hours(ms: number): string {
+  const minutes = Math.max(0, Math.floor(ms / 60_000));
+  return minutes < 60 ? duration(ms) : `${Math.floor(minutes / 60)} h ${minutes % 60} min`;
+}
+
 /** A distance in the firm's units, with the unit. */
 export function distance(metres: number, units: Me['units']): string {
   if (units === 'feet') {

@@ -18,6 +18,13 @@ export const officeDayQuery = (crewId: number) =>
     queryFn: () => api(crewDay, 'GET', `/api/crews/${crewId}/day`),
   });
 
+/** A local day of a crew, YYYY-MM-DD. */
+export const crewDayOnQuery = (crewId: number, date: string) =>
+  queryOptions({
+    queryKey: [...crewDayKey, 'on', crewId, date],
+    queryFn: () => api(crewDay, 'GET', `/api/crews/${crewId}/day?date=${date}`),
+  });
+
 const touches = [crewDayKey];
 export const useShiftStep = (crewId: number) =>
   useChange(

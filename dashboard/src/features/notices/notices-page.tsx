@@ -14,6 +14,7 @@ import { useState } from 'react';
 import { ListPage } from '../../components/list-page';
 import { noticeRulesQuery, useChangeNoticeRules, useDefaultNoticeRules } from '../../lib/notices';
 import { DeviceWays } from './device-ways';
+import { SheetsByMail } from './sheets-by-mail';
 import './notices.css';
 
 type Typed = Map<string, string>;
@@ -29,6 +30,7 @@ export default function NoticesPage() {
       {(rules) => (
         <>
           <DeviceWays />
+          <SheetsByMail />
           <RulesTable key={JSON.stringify(rules)} rules={rules} />
         </>
       )}
