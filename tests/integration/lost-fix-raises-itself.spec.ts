@@ -2,6 +2,7 @@ import { LostFixWatch } from '@hubtack/backend/lost-fixes/lost-fix.watch.js';
 import type { LostFix, LostFixDetail, LostFixList } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { lostFixDetail, lostFixList } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { correctionSources } from '@hubtack/drizzle/schema/correction-sources.js';
+import { lostFixes } from '@hubtack/drizzle/schema/lost-fixes.js';
 import { rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { eq } from 'drizzle-orm';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
@@ -197,4 +198,24 @@ describe('a mount point that fails', () => {
     const closed = (await all('closed')).map(({ closed: how }) => how!.cause);
     expect(closed).toEqual(['baseStationFault', 'baseStationFault', 'baseStationFault', 'baseStationFault']);
   });
+});
+
+it('a rover that was out of coverage all of yesterday and uploads it in order today: what was raised is withdrawn', async () => {
+  const tuesday = NINE - 86_400_000;
+  server.clock.set(tuesday - 3 * 3_600_000);
+  const everyDay = [2, 3].map((weekday) => ({ weekday, start: '08:00', end: '09:00' }));
+  const away = await server.makeRover('R-11', await server.makeCrew('Echidna', { pattern: everyDay }));
+  server.clock.set(tuesday + 2 * 3_600_000);
+  server.app.get(LostFixWatch).sweep();
+  // Sign-ins of yesterday are over by now: the rows themselves.
+  const ofEchidna = () =>
+    server.database.select().from(lostFixes).where(eq(lostFixes.roverId, away.id)).all();
+  expect(ofEchidna()).toMatchObject([{ kind: 'notHeard', ending: 'shiftEnd' }]);
+  server.clock.set(NINE - 3 * 3_600_000);
+  server.app.get(LostFixWatch).sweep();
+  let body = '';
+  for (let second = 0; second < 3600; second += 5) body += gga(tuesday - 3_600_000 + second * S, 4);
+  await postSentences(server.url, away.key, body, '?date=2026-12-01');
+  server.app.get(LostFixWatch).sweep();
+  expect(ofEchidna()).toMatchObject([{ ending: 'withdrawn' }]);
 });

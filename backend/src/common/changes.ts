@@ -11,6 +11,8 @@ export type Change =
   | { kind: 'assignment'; roverId: number; from: number }
   /** What is known of these lost fixes changed. */
   | { kind: 'lostFix'; lostFixIds: number[] }
+  /** These local days became holidays, or are none any more. */
+  | { kind: 'holidays'; days: string[] }
   /** A rover's keys changed. */
   | { kind: 'roverKeys'; roverId: number }
   /** These sign-ins no longer count, or count with another role. */

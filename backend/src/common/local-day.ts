@@ -32,3 +32,7 @@ export function clockTimeOn(day: Interval, clockTime: string, zone: string): num
 /** ISO 8601 weekday, 1 Monday to 7 Sunday, of a local day. */
 export const weekdayOf = (day: Interval, zone: string): number =>
   DateTime.fromMillis(day.start, { zone }).weekday;
+
+/** The local day that an instant lies on, YYYY-MM-DD. */
+export const isoDateOf = (instant: number, zone: string): string =>
+  DateTime.fromMillis(instant, { zone }).toISODate()!;

@@ -1,4 +1,5 @@
 import { Injectable } from '@nestjs/common';
+import { Clock } from '../common/clock.js';
 import type { Epoch, LateSigmas } from './epoch.js';
 import { EpochRepository } from './epoch.repository.js';
 import { FiguresToDo } from './figures-to-do.repository.js';
@@ -17,6 +18,9 @@ import {
 } from './timeline.js';
 import { TrackStore } from './track.store.js';
 
+/** Older than this when it comes, a sentence was stored somewhere. */
+const STORED_MS = 10 * 60_000;
+
 export interface Written {
   accepted: number;
   duplicates: number;
@@ -28,8 +32,8 @@ export interface RoverChange {
   track: RoverTrack;
   /** Runs began, ended or were corrected (the newest one merely growing does not count). */
   spansChanged: boolean;
-  /** Earliest epoch that came after newer ones; null when all came in order. */
-  lateFrom: number | null;
+  /** Earliest epoch that was accepted; null while there is none. */
+  from: number | null;
   accepted: number;
 }
 
@@ -47,6 +51,7 @@ export class TimelineWriter {
     private readonly spans: SpanRepository,
     private readonly tracks: TrackStore,
     private readonly toDo: FiguresToDo,
+    private readonly clock: Clock,
   ) {}
 
   begin(): void {
@@ -60,6 +65,7 @@ export class TimelineWriter {
     for (const epoch of epochs) {
       if (this.epochs.insert(roverId, epoch)) {
         written.accepted++;
+        change.from = Math.min(change.from ?? Infinity, epoch.time);
         const { tail } = change.track;
         if (tail !== null && epoch.time <= tail.lastTime) this.addLate(roverId, epoch.time);
         else this.advance(change, epoch);
@@ -72,13 +78,22 @@ export class TimelineWriter {
 
   /** Works the late stretches out again; the last thing before the commit. */
   settleLate(): void {
+    this.noteStored();
     for (const [roverId, times] of this.late) {
       const change = this.changeOf(roverId);
       for (const stretch of stretchesOf(times, 2 * HOLD_MS)) {
         this.correct(change, stretch);
         this.toDo.add({ roverId, start: stretch.first, end: stretch.last + HOLD_MS });
-        change.lateFrom = Math.min(change.lateFrom ?? Infinity, stretch.first);
       }
+    }
+  }
+
+  /** Sentences that were stored while out of coverage come in order, and change figures of the past all the same. */
+  private noteStored(): void {
+    const now = this.clock.now();
+    for (const { roverId, track, from } of this.touched.values()) {
+      if (from === null || from > now - STORED_MS || track.tail === null) continue;
+      this.toDo.add({ roverId, start: from, end: Math.min(track.tail.lastTime, now) + HOLD_MS });
     }
   }
 
@@ -91,7 +106,7 @@ export class TimelineWriter {
   private changeOf(roverId: number): RoverChange {
     let change = this.touched.get(roverId);
     if (!change) {
-      change = { roverId, track: this.tracks.get(roverId), spansChanged: false, lateFrom: null, accepted: 0 };
+      change = { roverId, track: this.tracks.get(roverId), spansChanged: false, from: null, accepted: 0 };
       this.touched.set(roverId, change);
     }
     return change;

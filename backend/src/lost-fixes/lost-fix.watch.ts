@@ -54,8 +54,8 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
   onApplicationBootstrap(): void {
     this.outages.restore();
     this.queue.changes.subscribe((changes) => {
-      for (const { roverId, spansChanged, lateFrom } of changes) {
-        if (spansChanged) this.setBack(roverId, lateFrom);
+      for (const { roverId, spansChanged, from } of changes) {
+        if (spansChanged) this.setBack(roverId, from);
       }
     });
     this.changes.all.subscribe((change) => {
@@ -142,11 +142,11 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     if (rover) rover.hasOpen = true;
   }
 
-  private setBack(roverId: number, lateFrom: number | null): void {
+  private setBack(roverId: number, from: number | null): void {
     const rover = this.rovers.get(roverId);
     if (!rover) return;
     rover.isStale = true;
-    if (lateFrom !== null) rover.lookedAt = Math.min(rover.lookedAt, lateFrom);
+    if (from !== null) rover.lookedAt = Math.min(rover.lookedAt, from);
   }
 
   private setCrewBack(crewId: number, from: number): void {

@@ -1,7 +1,7 @@
 import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { clip, intersect, subtract, union, type Interval } from '../common/interval.js';
 import { localDayOf } from '../common/local-day.js';
-import { crewDayOf, type CrewDay, type ShiftMark } from './on-shift.js';
+import { crewDayOf, type CrewDay, type Holidays, type ShiftMark } from './on-shift.js';
 
 /** One shift of a crew as a whole, over midnight if need be. */
 export interface CrewShift {
@@ -53,6 +53,7 @@ export function crewShiftsOf(
   pattern: readonly ShiftPatternDay[],
   zone: string,
   heardOn: (day: Interval) => Interval | null,
+  holidays?: Holidays,
 ): CrewShift[] {
   // A shift over midnight belongs to the days on both sides.
   const days = localDays({ start: window.start - HALF_DAY_MS, end: window.end + HALF_DAY_MS }, zone);
@@ -60,7 +61,7 @@ export function crewShiftsOf(
   const unset: CrewShift[] = [];
   for (const day of days) {
     const ofDay = marks.filter((mark) => overlaps(mark, day));
-    const { basis, onShift } = crewDayOf(day, ofDay, pattern, zone);
+    const { basis, onShift } = crewDayOf(day, ofDay, pattern, zone, holidays);
     if (basis === 'pattern') planned.push(...onShift);
     const heard = basis === 'noShiftSet' ? heardOn(day) : null;
     if (heard) unset.push({ basis: 'noShiftSet', ...heard, onShift: [heard], pauses: [] });

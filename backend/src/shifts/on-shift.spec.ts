@@ -47,6 +47,12 @@ describe('on-shift time of a local day', () => {
     expect(hours(crewDayOf(day, [], pattern, ZONE).onShift)).toEqual([[7, 15.5]]);
     expect(crewDayOf(day, [], [], ZONE).basis).toBe('noShiftSet');
   });
+  it('on a holiday the pattern does not count; marks do', () => {
+    const holidays = new Set(['2026-12-02']);
+    expect(crewDayOf(day, [], pattern, ZONE, holidays).basis).toBe('noShiftSet');
+    const marks = [{ start: at('2026-12-02T08:00:00'), end: at('2026-12-02T10:00:00'), pauses: [] }];
+    expect(hours(crewDayOf(day, marks, pattern, ZONE, holidays).onShift)).toEqual([[8, 10]]);
+  });
   it('an open shift and an open pause run on', () => {
     const marks = [
       {

@@ -1,7 +1,7 @@
 import type { Duty } from '@hubtack/contracts/board/lane.js';
 import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { clip, subtract, union, type Interval } from '../common/interval.js';
-import { clockTimeOn, localDayOf, weekdayOf } from '../common/local-day.js';
+import { clockTimeOn, isoDateOf, localDayOf, weekdayOf } from '../common/local-day.js';
 
 /** A shift as marked, with its pauses; an end that is null has not come yet. */
 export interface ShiftMark {
@@ -23,7 +23,17 @@ export interface CrewDay {
 
 const DAY_BEFORE_MS = 12 * 3_600_000;
 
-function patternOn(day: Interval, pattern: readonly ShiftPatternDay[], zone: string): Interval[] {
+/** Local days on which no pattern counts, YYYY-MM-DD. */
+export type Holidays = ReadonlySet<string>;
+const noHolidays: Holidays = new Set();
+
+function patternOn(
+  day: Interval,
+  pattern: readonly ShiftPatternDay[],
+  zone: string,
+  holidays: Holidays,
+): Interval[] {
+  if (holidays.size > 0 && holidays.has(isoDateOf(day.start, zone))) return [];
   const weekday = weekdayOf(day, zone);
   return pattern
     .filter((line) => line.weekday === weekday)
@@ -43,6 +53,7 @@ export function crewDayOf(
   marks: readonly ShiftMark[],
   pattern: readonly ShiftPatternDay[],
   zone: string,
+  holidays: Holidays = noHolidays,
 ): CrewDay {
   const closed = (part: { start: number; end: number | null }) => ({
     start: part.start,
@@ -55,7 +66,10 @@ export function crewDayOf(
   }
   // A shift of the evening before may run past midnight into this day.
   const dayBefore = localDayOf(day.start - DAY_BEFORE_MS, zone);
-  const planned = [...patternOn(dayBefore, pattern, zone), ...patternOn(day, pattern, zone)];
+  const planned = [
+    ...patternOn(dayBefore, pattern, zone, holidays),
+    ...patternOn(day, pattern, zone, holidays),
+  ];
   const onShift = clip(union(planned), day);
   return onShift.length > 0
     ? { basis: 'pattern', onShift, pauses: [] }

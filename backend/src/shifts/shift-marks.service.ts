@@ -14,6 +14,7 @@ import { localDayOf } from '../common/local-day.js';
 import { conflict, notFound, ProblemException } from '../common/problem.exception.js';
 import { tapTime } from '../common/tap-time.js';
 import { DATABASE } from '../database/database.module.js';
+import { HolidaysService } from '../settings/holidays.service.js';
 import { SettingsService } from '../settings/settings.service.js';
 import { crewShiftsOf } from './crew-shifts.js';
 import { stepOf, type StepEffect, type StepShift } from './shift-steps.js';
@@ -26,6 +27,7 @@ export class ShiftMarksService {
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly settings: SettingsService,
+    private readonly holidays: HolidaysService,
     private readonly audit: AuditService,
     private readonly changes: Changes,
     private readonly clock: Clock,
@@ -191,9 +193,14 @@ export class ShiftMarksService {
   ): StepShift | null {
     const day = localDayOf(at, zone);
     const marks = this.list(crewId, { start: day.start - 86_400_000, end: day.end + 86_400_000 });
-    const planned = crewShiftsOf({ start: at, end: at + 1 }, marks, pattern, zone, () => null).find(
-      ({ basis }) => basis === 'pattern',
-    );
+    const planned = crewShiftsOf(
+      { start: at, end: at + 1 },
+      marks,
+      pattern,
+      zone,
+      () => null,
+      this.holidays.days(),
+    ).find(({ basis }) => basis === 'pattern');
     return planned
       ? { id: null, start: planned.start, end: planned.end, isFinished: false, pauses: [] }
       : null;

@@ -9,6 +9,7 @@ import { clip, type Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 import { clipSpans } from '../fixes/timeline.js';
 import { FixesService } from '../fixes/fixes.service.js';
+import { HolidaysService } from '../settings/holidays.service.js';
 import { clipShift, crewShiftsOf, type CrewShift } from './crew-shifts.js';
 import { crewDayOf, type CrewDay, type ShiftMark } from './on-shift.js';
 
@@ -23,6 +24,7 @@ export class ShiftsService {
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly fixes: FixesService,
+    private readonly holidays: HolidaysService,
   ) {}
 
   /** When a crew is on shift on a local day. */
@@ -32,7 +34,7 @@ export class ShiftsService {
       .from(crews)
       .where(eq(crews.id, crewId))
       .get();
-    return crewDayOf(day, this.marks(crewId, day), crew?.pattern ?? [], zone);
+    return crewDayOf(day, this.marks(crewId, day), crew?.pattern ?? [], zone, this.holidays.days());
   }
 
   /**
@@ -45,7 +47,7 @@ export class ShiftsService {
       const days = { start: had.start - 2 * DAY_MS, end: had.end + 2 * DAY_MS };
       const heardOn = (day: Interval) =>
         this.heardOn(roverId, clip([day], { start, end: end ?? day.end })[0]);
-      return crewShiftsOf(had, this.marks(crewId, days), pattern, zone, heardOn)
+      return crewShiftsOf(had, this.marks(crewId, days), pattern, zone, heardOn, this.holidays.days())
         .map((shift) => clipShift(shift, { start, end }))
         .filter((shift) => shift !== null)
         .map((shift) => ({ ...shift, roverId, crewId }));

@@ -13,7 +13,7 @@ import { Subject } from 'rxjs';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import type { Interval } from '../common/interval.js';
-import { isoWeekOf, localDayOf } from '../common/local-day.js';
+import { isoDateOf, isoWeekOf, localDayOf } from '../common/local-day.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
 import { DATABASE } from '../database/database.module.js';
@@ -92,6 +92,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
         for (const roverId of this.shifts.roversSince(change.crewId, change.from))
           this.add(roverId, change.from, change.to);
       if (change.kind === 'assignment') this.add(change.roverId, change.from, this.clock.now());
+      if (change.kind === 'holidays') this.addDays(change.days);
       if (change.kind === 'firm') this.compareSettings();
     });
     this.timer = setInterval(() => this.tick(BUDGET_MS), TICK_MS);
@@ -132,6 +133,16 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     for (const { roverId } of this.roster.list(now)) {
       const first = this.fixes.firstHeardAt(roverId);
       if (first !== null) this.add(roverId, Math.max(first, from), now);
+    }
+  }
+
+  private addDays(days: readonly string[]): void {
+    const { timeZone: zone } = this.settings.get();
+    const now = this.clock.now();
+    for (const day of days) {
+      const { start, end } = localDayOf(DateTime.fromISO(day, { zone }).toMillis(), zone);
+      if (start >= now) continue;
+      for (const { roverId } of this.roster.list(now)) this.add(roverId, start, Math.min(end, now));
     }
   }
 
@@ -209,7 +220,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
   private writeDay(roverId: number, interval: Interval, zone: string): string {
     const now = this.clock.now();
     const limits = detectorLimitsOf(this.settings.get().limits);
-    const day = DateTime.fromMillis(interval.start, { zone }).toISODate()!;
+    const day = isoDateOf(interval.start, zone);
     const week = isoWeekOf(interval.start, zone);
     const mountPoint = this.roster.mountPointOf(roverId);
     const within = this.figures.withinSpans(roverId, interval);

@@ -4,7 +4,7 @@ import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { shiftFigures } from '@hubtack/drizzle/schema/shift-figures.js';
 import { toleranceSpans } from '@hubtack/drizzle/schema/tolerance-spans.js';
-import { and, asc, eq, gt, inArray, lt, max, sql } from 'drizzle-orm';
+import { and, asc, count, eq, gt, inArray, lt, max, sql } from 'drizzle-orm';
 import type { Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 
@@ -33,6 +33,10 @@ export class ShiftFiguresRepository {
       .where(and(eq(shiftFigures.roverId, roverId), eq(shiftFigures.day, day)))
       .run();
     for (const row of rows) this.database.insert(shiftFigures).values(row).run();
+  }
+
+  count(): number {
+    return this.database.select({ count: count() }).from(shiftFigures).get()!.count;
   }
 
   /** The newest local day with figures of a rover; null without any. */

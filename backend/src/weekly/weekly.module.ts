@@ -5,6 +5,7 @@ import { SettingsModule } from '../settings/settings.module.js';
 import { ShiftsModule } from '../shifts/shifts.module.js';
 import { FiguresKeeper } from './figures.keeper.js';
 import { LostTimeRepository } from './lost-time.repository.js';
+import { PreviewService } from './preview.service.js';
 import { ShiftFiguresRepository } from './shift-figures.repository.js';
 import { WeeklyController } from './weekly.controller.js';
 import { WeeklyService } from './weekly.service.js';
@@ -13,7 +14,7 @@ import { WeeklyService } from './weekly.service.js';
 @Module({
   imports: [FixesModule, ShiftsModule, RoversModule, SettingsModule],
   controllers: [WeeklyController],
-  providers: [ShiftFiguresRepository, LostTimeRepository, FiguresKeeper, WeeklyService],
+  providers: [ShiftFiguresRepository, LostTimeRepository, FiguresKeeper, WeeklyService, PreviewService],
   exports: [WeeklyService, FiguresKeeper],
 })
 export class WeeklyModule {}

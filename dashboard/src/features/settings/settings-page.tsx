@@ -4,6 +4,8 @@ import { useState } from 'react';
 import { Form } from '../../components/form';
 import { ChoiceField, NumberField, TextField } from '../../components/form-fields';
 import { ListPage } from '../../components/list-page';
+import { HolidaysPart } from './holidays-part';
+import { PreviewPart } from './preview-part';
 import './settings.css';
 import { settingsQuery, useChangeSettings } from '../../lib/settings';
 
@@ -31,6 +33,20 @@ function LimitFields() {
       {limitFields.map(([name, label, hint]) => (
         <NumberField key={name} name={`limits.${name}`} label={label} hint={hint} required />
       ))}
+    </fieldset>
+  );
+}
+
+/** When a fix counts as within tolerance in the weekly figures. */
+function ToleranceFields() {
+  return (
+    <fieldset className="limits">
+      <legend>Tolerance profile</legend>
+      <p>Fixed time counts as within tolerance while all of these hold.</p>
+      <TextField name="toleranceProfile.name" label="Name" required />
+      <NumberField name="toleranceProfile.maxAgeSeconds" label="Age of corrections to, s" required />
+      <NumberField name="toleranceProfile.maxHdop" label="HDOP to" required />
+      <NumberField name="toleranceProfile.minSatellites" label="Satellites from" required />
     </fieldset>
   );
 }
@@ -82,6 +98,14 @@ function SettingsForm({ current }: { current: Settings }) {
           ]}
         />
         <LimitFields />
+        <ToleranceFields />
+        <PreviewPart />
+        <NumberField
+          name="weeklyMailHour"
+          label="Hour of Monday at which the week goes out by mail"
+          hint="0 to 23, local time. People switch it on for themselves under Notices."
+          required
+        />
       </Form>
       {isSaved && <p role="status">Saved.</p>}
     </div>
@@ -92,7 +116,12 @@ export default function SettingsPage() {
   const query = useQuery(settingsQuery);
   return (
     <ListPage title="Settings" what="the settings" query={query}>
-      {(current) => <SettingsForm current={current} />}
+      {(current) => (
+        <>
+          <SettingsForm current={current} />
+          <HolidaysPart />
+        </>
+      )}
     </ListPage>
   );
 }
