@@ -2,7 +2,7 @@ import { lossCase, simulatedCauses, CASE_SECONDS } from '@hubtack/simulators/sce
 import { randomOf } from '@hubtack/simulators/scenarios/random.js';
 import { epochAt } from '@hubtack/simulators/scenarios/simulated-epoch.js';
 import type { Row } from './report.js';
-import { SimulatedFirm } from './simulated-firm.js';
+import { SimulatedFirm, allDay } from './simulated-firm.js';
 
 const CASES = 504;
 /** Wanted of the first cause: over all, and for each cause (design: diagnosis.md; issue). */
@@ -19,7 +19,7 @@ export async function diagnosis(seed: number): Promise<Row[]> {
   const units = cases.flatMap((one, index) => {
     const sourceId = firm.addSource(`M${index}`, one.base);
     return one.rovers.map((rover, at) => {
-      const { roverId } = firm.addCrew(`${index}.${at}`, sourceId, true);
+      const { roverId } = firm.addCrew(`${index}.${at}`, sourceId, allDay);
       return { roverId, rover, cause: one.cause, random: randomOf(seed * 7 + index * 10 + at) };
     });
   });

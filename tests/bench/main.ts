@@ -7,6 +7,7 @@ import { notices } from './notices.js';
 import { printRow, type Row } from './report.js';
 import { fanOut, freshness, stalled } from './stream.js';
 import { timelineQuery } from './timeline-query.js';
+import { weekly } from './weekly.js';
 
 const args = process.argv.slice(2);
 /** Of whatever is simulated: other seeds than the usual one try what nobody has looked at. */
@@ -25,6 +26,7 @@ const benches: Record<string, () => Promise<Row[]>> = {
   diagnosis: () => diagnosis(seed),
   notices: () => notices(seed),
   flag,
+  weekly,
   capacity,
 };
 

@@ -52,7 +52,7 @@ export async function notices(seed: number): Promise<Row[]> {
   const units = day.crews.map((crew): Unit => {
     const sourceId = sources.get(crew.mountPoint) ?? firm.addSource(crew.mountPoint, crew.base);
     sources.set(crew.mountPoint, sourceId);
-    return { crew, ...firm.addCrew(crew.name, sourceId, false) };
+    return { crew, ...firm.addCrew(crew.name, sourceId, []) };
   });
   firm.announce();
   const chief = { userId: dispatcher.id, name: 'chief', role: 'dispatcher' } as never;

@@ -2,6 +2,7 @@ import { CommitQueue } from '@hubtack/backend/fixes/commit.queue.js';
 import type { Epoch } from '@hubtack/backend/fixes/epoch.js';
 import { LostFixWatch } from '@hubtack/backend/lost-fixes/lost-fix.watch.js';
 import { Changes } from '@hubtack/backend/common/changes.js';
+import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { correctionSources } from '@hubtack/drizzle/schema/correction-sources.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { lostFixes } from '@hubtack/drizzle/schema/lost-fixes.js';
@@ -14,7 +15,11 @@ interface Place {
   longitude: number;
 }
 
-const allDay = [1, 2, 3, 4, 5, 6, 7].map((weekday) => ({ weekday, start: '00:00', end: '00:00' }));
+export const allDay: ShiftPatternDay[] = [1, 2, 3, 4, 5, 6, 7].map((weekday) => ({
+  weekday,
+  start: '00:00',
+  end: '00:00',
+}));
 
 /** The whole application with a clock that the bench moves: a day passes in minutes, and every second of it is looked at. */
 export class SimulatedFirm {
@@ -46,10 +51,9 @@ export class SimulatedFirm {
       .get().id;
   }
 
-  /** A crew with one rover. With `isOnShiftAllDay` its pattern says so; else its marks do. */
-  addCrew(name: string, sourceId: number, isOnShiftAllDay: boolean): { crewId: number; roverId: number } {
+  /** A crew with one rover, on shift all day or by a pattern; with an empty one its marks say. */
+  addCrew(name: string, sourceId: number, pattern: ShiftPatternDay[]): { crewId: number; roverId: number } {
     const { database } = this.server;
-    const pattern = isOnShiftAllDay ? allDay : [];
     const crewId = database.insert(crews).values({ name, pattern }).returning().get().id;
     const roverId = database
       .insert(rovers)

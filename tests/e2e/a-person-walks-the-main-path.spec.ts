@@ -121,6 +121,38 @@ describe('each role signs in and does what it came for', () => {
     await page.context().close();
   });
 
+  it('manager: reads the week, goes from a cell to the day, and from there to the lost fix', async () => {
+    const { page, errors } = await newPage(browser, server.url);
+    await signIn(page, 'manager');
+    await page.getByRole('link', { name: 'Weekly' }).click();
+    await page.getByRole('button', { name: 'Week before' }).click();
+    await page.getByText(/% fix uptime, .* of paid time without a fix, \d+ % of it/).waitFor();
+    await page.getByRole('button', { name: 'Compare' }).click();
+    await page
+      .getByRole('columnheader', { name: /^Week \d+$/ })
+      .nth(1)
+      .waitFor();
+    const csv = page.waitForEvent('download');
+    await page.getByRole('link', { name: 'Spreadsheet (CSV)' }).click();
+    expect((await csv).suggestedFilename()).toMatch(/2026-W\d\d\.csv$/);
+    await page
+      .getByRole('link', { name: /^Dogwood, 2026-/ })
+      .first()
+      .click();
+    await page.getByRole('heading', { name: 'Dogwood' }).waitFor();
+    await page
+      .getByText(/fix uptime over .* on shift/)
+      .first()
+      .waitFor();
+    await page
+      .getByRole('link', { name: /^Lost fix, / })
+      .first()
+      .click();
+    await page.getByRole('heading', { name: 'History' }).waitFor();
+    expect(errors).toEqual([]);
+    await page.context().close();
+  });
+
   it('crew chief: the own crew on a phone, and nothing else', async () => {
     const { page, errors } = await newPage(browser, server.url, { width: 390 });
     await signIn(page, 'chief.alder');
@@ -172,6 +204,8 @@ describe('axe finds nothing serious', () => {
       '/lost-fixes',
       '/lost-fixes/1',
       '/notices',
+      '/weekly?week=2026-W47',
+      '/crews/4/days/2026-11-20',
     ]) {
       await page.goto(path);
       await page.getByRole('heading', { level: 1 }).waitFor();

@@ -18,13 +18,24 @@ export interface FleetOptions {
   onProblem?: (label: string, error: Error) => void;
 }
 
+const METRES_A_DEGREE = 111_320;
+
+function simulatedRover(
+  rover: FleetRover,
+  { behaviours, northM = 0 }: CrewStory,
+  seed: number,
+): SimulatedRover {
+  const site = { latitude: rover.latitude + northM / METRES_A_DEGREE, longitude: rover.longitude };
+  return new SimulatedRover(site, behaviours, seed);
+}
+
 /** Runs a fleet: each rover sends once a simulated second, on the second, as receivers do. */
 export async function runFleet(options: FleetOptions): Promise<void> {
   const { rovers, story, seed, speed, durationSeconds, signal } = options;
   const fleet = rovers.map((rover, index) => ({
     rover,
     link: options.link(rover),
-    simulated: new SimulatedRover(rover, story(index).behaviours, seed * 1000 + index),
+    simulated: simulatedRover(rover, story(index), seed * 1000 + index),
     busy: false,
   }));
   const start = Math.ceil(Date.now() / 1000) * 1000;

@@ -14,7 +14,8 @@ const usage = `Simulated crews that send real sentences to a running server.
 
 Scenarios: ${scenarioNames.join(', ')}
 --truth writes what is true of each rover beside the sentences: losses by cause, and what a chief would mark, in
-seconds since the start. A day lasts ten hours: give --speed.
+simulated seconds since the start. A day lasts ten hours. At another speed sentences carry the real time, so that
+for the server a loss lasts as many times shorter: the whole of a day at speed is what the benches are for.
 Keys come from --keys (with --crews, the first N of it); without, from a running demo's own file when no --crews is
 given; else crews, rovers and keys are made by signing in as a technician or manager.`;
 

@@ -58,6 +58,15 @@ export async function makeRovers(api: Api, count: number): Promise<FleetRover[]>
   const made = z.object({ id: z.number() });
   const issued = z.object({ key: z.string() });
   const stamp = Date.now().toString(36).slice(-4);
+  const base = {
+    name: `Simulated base ${stamp}`,
+    address: 'localhost',
+    port: 2101,
+    mountPoint: `SIM${stamp}`,
+    baseLatitude: MIDDLE.latitude,
+    baseLongitude: MIDDLE.longitude,
+  };
+  const source = made.parse(await (await call('/api/correction-sources', base, cookie)).json());
   const rovers: FleetRover[] = [];
   for (let index = 0; index < count; index++) {
     const number = String(index + 1).padStart(3, '0');
@@ -70,7 +79,7 @@ export async function makeRovers(api: Api, count: number): Promise<FleetRover[]>
     };
     const crew = made.parse(await (await call('/api/crews', crewBody, cookie)).json());
     const label = `S${stamp}-${number}`;
-    const roverBody = { label, receiver: 'simulated', serial: null, correctionSourceId: null };
+    const roverBody = { label, receiver: 'simulated', serial: null, correctionSourceId: source.id };
     const rover = made.parse(await (await call('/api/rovers', roverBody, cookie)).json());
     await call(`/api/rovers/${rover.id}/assignments`, { crewId: crew.id }, cookie);
     const { key } = issued.parse(await (await call(`/api/rovers/${rover.id}/key`, {}, cookie)).json());

@@ -21,9 +21,9 @@ export const steady =
   (firstFixAfter = 25): Behaviour =>
   (_state, seconds, random) => ({
     quality: seconds < firstFixAfter ? (seconds < firstFixAfter / 2 ? 1 : 5) : 4,
-    satellites: 21 + Math.floor(chance(random) * 5),
-    hdop: 0.6 + Math.floor(chance(random) * 3) / 10,
-    ageSeconds: seconds < 4 ? null : 0.8 + chance(random) * 0.6,
+    satellites: 18 + Math.floor(chance(random) * 9),
+    hdop: 0.5 + Math.floor(chance(random) * 7) / 10,
+    ageSeconds: seconds < 4 ? null : 0.6 + chance(random) * 1.4,
     stationId: seconds < 4 ? null : 1,
     quiet: false,
   });

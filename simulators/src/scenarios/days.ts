@@ -55,7 +55,7 @@ function failBase(all: CrewPlan[], random: RandomGenerator): Day['mountPointFail
   const fromSecond = between(random, 9000, 12_000);
   const toSecond = fromSecond + between(random, 900, 1500);
   for (const plan of all.filter((one) => one.mountPoint === mountPoint)) {
-    const heldSeconds = between(random, 14, 50);
+    const heldSeconds = between(random, 12, 58);
     const from = fromSecond + heldSeconds;
     plan.wanted.push({
       cause: 'mountPointDown',
@@ -67,10 +67,12 @@ function failBase(all: CrewPlan[], random: RandomGenerator): Day['mountPointFail
   return { mountPoint, fromSecond, toSecond };
 }
 
-/** Two places without mobile data: a crew that passes is not heard for some minutes. */
+/** Two places without mobile data, each on the way of a few crews: whoever passes is not heard for some minutes. */
 function deadSpots(all: readonly CrewPlan[], random: RandomGenerator): void {
-  for (let spot = 0; spot < 2; spot++)
-    for (let visits = 0; visits < 3; visits++) place(pick(all, random), 'wentQuiet', 90, 360, random);
+  for (let spot = 0; spot < 2; spot++) {
+    const onTheWay = Array.from({ length: 3 }, () => pick(all, random));
+    for (const plan of onTheWay) place(plan, 'wentQuiet', 90, 360, random);
+  }
 }
 
 /** One login mistyped since power-up, put right after half an hour or more. */
@@ -93,12 +95,12 @@ export function badDay(seed: number): Day {
   const failure = failBase(all, random);
   mistype(all[mountPoints[0]!.crews]!, random);
   deadSpots(all, random);
-  const underTrees = Array.from({ length: 4 }, () => pick(all, random));
+  const underTrees = Array.from({ length: 5 }, () => pick(all, random));
   for (const plan of underTrees)
     for (let visits = 0; visits < 3; visits++) place(plan, 'skyBlocked', 60, 900, random);
   for (let flat = 0; flat < 2; flat++) place(pick(all, random), 'wentQuiet', 600, 1800, random);
-  for (let count = 0; count < 6; count++) place(pick(all, random), 'correctionsStopped', 60, 600, random);
-  for (let count = 0; count < 3; count++) place(pick(all, random), 'notResolving', 60, 400, random);
+  for (let count = 0; count < 9; count++) place(pick(all, random), 'correctionsStopped', 60, 600, random);
+  for (let count = 0; count < 4; count++) place(pick(all, random), 'notResolving', 60, 400, random);
   place(pick(all, random), 'noPosition', 120, 600, random);
   const crews = all.map((plan) => crewOf(plan, random));
   return { seconds: DAY_SECONDS, crews, mountPointFailures: [failure] };

@@ -48,16 +48,16 @@ export function lossCase(cause: SimulatedCause, seed: number): LossCase {
   const isFromStart = cause === 'neverCorrected' || cause === 'notHeard';
   const from = isFromStart ? 0 : between(random, 300, 480);
   const to = isFromStart ? CASE_SECONDS - 60 : from + between(random, 60, 240);
-  const count = cause === 'mountPointDown' ? between(random, 3, 5) : between(random, 1, 4);
+  const count = cause === 'mountPointDown' ? between(random, 3, 5) : between(random, 3, 4);
   const failing = cause === 'mountPointDown' ? between(random, Math.ceil(count / 2), count) : 1;
-  const stops = from - 40;
+  const stops = from - 60;
   const rovers = Array.from({ length: count }, (_, index): CaseRover => {
     const isFailing = index < Math.max(failing, cause === 'mountPointDown' ? 2 : 1);
     const isFar = isFailing && cause === 'farFromBase';
     const site = isFar ? placeNear(base, random, 20.5, 45) : placeNear(base, random, 1, 18);
     if (!isFailing) return rover(site, null, random);
     // All lose their corrections at the same moment, give or take a second; each receiver holds its fix for as long as it does.
-    const held = between(random, 14, 50);
+    const held = between(random, 12, 58);
     const own = cause === 'mountPointDown' ? stops + held + between(random, 0, 1) : from;
     return rover(site, planLoss(cause, own, Math.max(to, own + 60), random, held), random);
   });

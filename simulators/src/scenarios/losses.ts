@@ -112,7 +112,7 @@ export function planLoss(
   from: number,
   to: number,
   random: RandomGenerator,
-  heldSeconds = between(random, 14, 55),
+  heldSeconds = between(random, 11, 60),
 ): PlannedLoss {
   const loss: Loss = { cause, fromSecond: from, toSecond: to };
   switch (cause) {

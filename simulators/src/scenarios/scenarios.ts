@@ -18,12 +18,16 @@ export interface CrewStory {
   behaviours: Behaviour[];
   losses: Loss[];
   marks: Marks | null;
+  /** Metres north of where its keys say it works. */
+  northM?: number;
 }
 
 /** Stories of the crews of a fleet, by number. */
 export type Scenario = (seed: number) => (crew: number) => CrewStory;
 
 const YEAR = 366 * 86_400;
+/** Beyond the longest distance to a base that is usual. */
+const FAR_M = 32_000;
 
 const plain =
   (behaviours: (crew: number) => Behaviour[]): Scenario =>
@@ -62,7 +66,8 @@ const losing =
     const from = isFromStart ? 0 : 120 + (cause === 'mountPointDown' ? 0 : crew * 7);
     const random = randomOf(seed * 1000 + crew);
     const { loss, behaviour } = planLoss(cause, from, from + (isFromStart ? 900 : 180), random);
-    return { behaviours: [steady(), behaviour], losses: [loss], marks: null };
+    const northM = cause === 'farFromBase' ? FAR_M : 0;
+    return { behaviours: [steady(), behaviour], losses: [loss], marks: null, northM };
   };
 
 const ofDay =
