@@ -11,6 +11,8 @@ import { meQuery } from './lib/session';
 
 /** Who is signed in, the board's code and its lanes are fetched while the rest of the page gets ready. */
 async function fetchAhead(): Promise<void> {
+  // A wall is opened by its link first: an answer from before would come after, and send it to the sign-in.
+  if (location.pathname === '/wall') return;
   if (location.pathname === '/') void import('./features/board/board-page');
   await queryClient.prefetchQuery(meQuery);
   if (queryClient.getQueryData(meQuery.queryKey)) await queryClient.prefetchQuery(boardQuery);
