@@ -182,7 +182,10 @@ describe('a mount point that fails', () => {
     const own = members.find(({ crewName }) => crewName === 'Dogwood')!;
     const seen = lostFixDetail.parse(await chief.json<LostFixDetail>('GET', `/api/lost-fixes/${own.id}`));
     expect(seen.advice).toMatchObject({ text: 'Switch to QUARB2', by: 'dispatcher' });
-    expect((await chief.call('GET', `/api/lost-fixes/${shared[0]!.id}`)).status).toBe(200);
+    // The chief sees the mount point's, and not whose crews else are on it.
+    expect(shared[0]!.diagnosis!.evidence.join(' ')).toContain('Banksia');
+    for (const path of [`/api/lost-fixes/${shared[0]!.id}`, '/api/board'])
+      expect(await (await chief.call('GET', path)).text()).not.toMatch(/Alder|Banksia/);
     expect(
       (await chief.call('GET', `/api/lost-fixes/${members.find(({ crewName }) => crewName === 'Alder')!.id}`))
         .status,

@@ -12,6 +12,7 @@ import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
 import { CommitQueue } from '../fixes/commit.queue.js';
 import type { RoverChange } from '../fixes/timeline.writer.js';
+import { forChief } from '../lost-fixes/lost-fix.view.js';
 import { LostFixesService } from '../lost-fixes/lost-fixes.service.js';
 import { MetricsService } from '../metrics/metrics.service.js';
 import { addMoved, eventText, nothingMoved, seesCrew, type Audience } from './frame.js';
@@ -135,7 +136,7 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
     return this.lostFixes
       .withCrews(this.lostFixes.openIds())
       .filter(({ crewIds }) => audience === 'office' || crewIds.some((crewId) => seesCrew(audience, crewId)))
-      .map(({ lostFix }) => lostFix);
+      .map(({ lostFix }) => (audience === 'office' ? lostFix : forChief(lostFix)));
   }
 
   private moveLostFixes(ids: readonly number[]): void {

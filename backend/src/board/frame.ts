@@ -1,5 +1,6 @@
 import type { Lane, LaneChange } from '@hubtack/contracts/board/lane.js';
 import type { LostFix } from '@hubtack/contracts/lost-fixes/lost-fix.js';
+import { forChief } from '../lost-fixes/lost-fix.view.js';
 import type { LanesEvent, LostFixEvent, StreamEventName } from '@hubtack/contracts/stream/events.js';
 
 /** Which lanes and lost fixes moved since some cursor. */
@@ -101,6 +102,6 @@ export function lostFixEventOf(
   const lostFixes = source
     .lostFixes([...moved.lostFixes])
     .filter(({ crewIds }) => audience === 'office' || crewIds.some((crewId) => seesCrew(audience, crewId)))
-    .map(({ lostFix }) => lostFix);
+    .map(({ lostFix }) => (audience === 'office' ? lostFix : forChief(lostFix)));
   return lostFixes.length > 0 ? { serverTime, lostFixes } : null;
 }

@@ -1,4 +1,4 @@
-import type { LostFix, LostFixStatus } from '@hubtack/contracts/lost-fixes/lost-fix.js';
+import type { Diagnosis, LostFix, LostFixStatus } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import type { lostFixes } from '@hubtack/drizzle/schema/lost-fixes.js';
 
 export type LostFixRow = typeof lostFixes.$inferSelect;
@@ -72,5 +72,17 @@ export function lostFixOf(record: LostFixRecord): LostFix {
       closedAt === null || confirmedCause === null
         ? null
         : { at: closedAt, by: closedBy ?? '', cause: confirmedCause, note: closingNote },
+  };
+}
+
+/** As a crew chief may see it: which other crews are on the mount point is not theirs to know. */
+export function forChief(lostFix: LostFix): LostFix {
+  if (lostFix.kind !== 'mountPoint') return lostFix;
+  const own = (diagnosis: Diagnosis | null) =>
+    diagnosis && { ...diagnosis, evidence: diagnosis.evidence.slice(0, 1) };
+  return {
+    ...lostFix,
+    diagnosis: own(lostFix.diagnosis),
+    diagnosisAtRaising: own(lostFix.diagnosisAtRaising),
   };
 }

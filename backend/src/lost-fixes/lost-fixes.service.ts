@@ -22,7 +22,7 @@ import { DATABASE } from '../database/database.module.js';
 import { RosterRepository } from '../rovers/roster.repository.js';
 import { LostFixAccess } from './lost-fix.access.js';
 import { LostFixRepository, type LostFixChange } from './lost-fix.repository.js';
-import { lostFixOf, saysLooksWrong, type LostFixRow } from './lost-fix.view.js';
+import { forChief, lostFixOf, saysLooksWrong, type LostFixRow } from './lost-fix.view.js';
 import { LostFixWatch } from './lost-fix.watch.js';
 import { LostFixWriter } from './lost-fix.writer.js';
 import { NearMountPoints } from './near-mount-points.js';
@@ -79,7 +79,7 @@ export class LostFixesService {
     const [record] = this.lostFixes.records([id]);
     const isForeign = (crewId: number | null) => viewer.role === 'crewChief' && crewId !== viewer.crewId;
     return {
-      ...lostFixOf(record!),
+      ...(viewer.role === 'crewChief' ? forChief(lostFixOf(record!)) : lostFixOf(record!)),
       // Advice on the mount point's is advice for all that hang under it.
       history: this.lostFixes.history(row.sharedId === null ? [id] : [id, row.sharedId]),
       photoList: this.lostFixes.photos(id),
