@@ -4,7 +4,7 @@ import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { shiftFigures } from '@hubtack/drizzle/schema/shift-figures.js';
 import { toleranceSpans } from '@hubtack/drizzle/schema/tolerance-spans.js';
-import { and, asc, count, eq, gt, inArray, lt, max, sql } from 'drizzle-orm';
+import { and, asc, count, eq, getTableColumns, gt, inArray, lt, max, sql } from 'drizzle-orm';
 import type { Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 
@@ -52,7 +52,7 @@ export class ShiftFiguresRepository {
   ofWeek(week: string): NamedShiftFigures[] {
     return this.database
       .select({
-        row: shiftFigures,
+        ...getTableColumns(shiftFigures),
         crewName: crews.name,
         hourlyRate: crews.hourlyRate,
         roverLabel: rovers.label,
@@ -62,8 +62,7 @@ export class ShiftFiguresRepository {
       .innerJoin(rovers, eq(rovers.id, shiftFigures.roverId))
       .where(eq(shiftFigures.week, week))
       .orderBy(asc(shiftFigures.day), asc(crews.name), asc(rovers.label), asc(shiftFigures.startAt))
-      .all()
-      .map(({ row, ...names }) => ({ ...row, ...names }));
+      .all();
   }
 
   sums(weeks: readonly string[]): Map<string, WeekSum> {

@@ -15,6 +15,7 @@ import { groupKeyOf, weekSentence, type LostGroup } from './week-sentence.js';
 
 const TWELVE = 12;
 const FOUR = 4;
+const byName = new Intl.Collator();
 const nothing: WeekSum = { onShiftMs: 0, fixedMs: 0 };
 
 /** The week as sums of its rover-shifts. */
@@ -155,15 +156,16 @@ function crewsOf(
       crewName: ofCrew[0]!.crewName,
       figures: weekFigures(ofCrew, withMoney),
       days: days.map((day) => {
-        const onDay = ofCrew.filter((row) => row.day === day);
-        return {
-          day,
-          onShiftMs: onDay.reduce((sum, row) => sum + wholeOf(row), 0),
-          fixedMs: onDay.reduce((sum, row) => sum + row.fixedMs, 0),
-        };
+        const sum = { day, onShiftMs: 0, fixedMs: 0 };
+        for (const row of ofCrew) {
+          if (row.day !== day) continue;
+          sum.onShiftMs += wholeOf(row);
+          sum.fixedMs += row.fixedMs;
+        }
+        return sum;
       }),
     }))
-    .toSorted((a, b) => a.crewName.localeCompare(b.crewName));
+    .toSorted((a, b) => byName.compare(a.crewName, b.crewName));
 }
 
 function causesOf(lost: readonly LostTime[]): WeekCause[] {
