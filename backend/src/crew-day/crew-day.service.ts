@@ -17,7 +17,7 @@ import { LostFixRepository } from '../lost-fixes/lost-fix.repository.js';
 import { lostFixOf } from '../lost-fixes/lost-fix.view.js';
 import { SettingsService } from '../settings/settings.service.js';
 import { dutyAt } from '../shifts/on-shift.js';
-import { ShiftMarksService } from '../shifts/shift-marks.service.js';
+import { ShiftMarksRepository } from '../shifts/shift-marks.repository.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 
 /** One local day of a crew in one answer: shifts, ribbons, lost fixes. */
@@ -27,7 +27,7 @@ export class CrewDayService {
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly settings: SettingsService,
     private readonly shifts: ShiftsService,
-    private readonly marks: ShiftMarksService,
+    private readonly marks: ShiftMarksRepository,
     private readonly fixes: FixesService,
     private readonly lostFixes: LostFixRepository,
     private readonly clock: Clock,

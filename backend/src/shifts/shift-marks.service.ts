@@ -3,13 +3,12 @@ import type { Shift, ShiftBody, ShiftStep, ShiftStepBody } from '@hubtack/contra
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { shiftPauses, shifts } from '@hubtack/drizzle/schema/shifts.js';
-import { and, asc, eq, gt, inArray, isNull, lt, ne, or } from 'drizzle-orm';
+import { and, eq, gt, isNull, lt, ne, or } from 'drizzle-orm';
 import { DateTime } from 'luxon';
 import { AuditService } from '../audit/audit.service.js';
 import type { Viewer } from '../auth/access.js';
 import { Changes } from '../common/changes.js';
 import { Clock } from '../common/clock.js';
-import type { Interval } from '../common/interval.js';
 import { localDayOf } from '../common/local-day.js';
 import { conflict, notFound, ProblemException } from '../common/problem.exception.js';
 import { tapTime } from '../common/tap-time.js';
@@ -17,6 +16,7 @@ import { DATABASE } from '../database/database.module.js';
 import { HolidaysService } from '../settings/holidays.service.js';
 import { SettingsService } from '../settings/settings.service.js';
 import { crewShiftsOf } from './crew-shifts.js';
+import { ShiftMarksRepository } from './shift-marks.repository.js';
 import { stepOf, type StepEffect, type StepShift } from './shift-steps.js';
 
 const FOREVER = Number.MAX_SAFE_INTEGER;
@@ -26,6 +26,7 @@ const FOREVER = Number.MAX_SAFE_INTEGER;
 export class ShiftMarksService {
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
+    private readonly marks: ShiftMarksRepository,
     private readonly settings: SettingsService,
     private readonly holidays: HolidaysService,
     private readonly audit: AuditService,
@@ -33,32 +34,16 @@ export class ShiftMarksService {
     private readonly clock: Clock,
   ) {}
 
-  /** Marks of a crew that touch the window, in order. */
-  list(crewId: number, window: Interval): Shift[] {
-    const rows = this.database
-      .select()
-      .from(shifts)
-      .where(
-        and(
-          eq(shifts.crewId, crewId),
-          lt(shifts.startAt, window.end),
-          or(isNull(shifts.endAt), gt(shifts.endAt, window.start)),
-        ),
-      )
-      .orderBy(asc(shifts.startAt))
-      .all();
-    return this.withPauses(rows);
-  }
-
   /** Start, pause, resume or finish. Throws 409 when that contradicts what is marked. */
   step(viewer: Viewer, crewId: number, step: ShiftStep, body: ShiftStepBody): void {
     const at = tapTime(body.at, this.clock.now());
     this.database.transaction(() => {
       const crew = this.crew(crewId);
       const zone = this.settings.get().timeZone;
-      const current = this.markedAt(crewId, at) ?? this.plannedAt(crewId, crew.pattern, at, zone);
+      const current =
+        this.marks.markedAt(crewId, at, this.clock.now()) ?? this.plannedAt(crewId, crew.pattern, at, zone);
       const clock = (instant: number) => DateTime.fromMillis(instant, { zone }).toFormat('HH:mm');
-      const result = stepOf(step, at, body.reason, current, this.nextStart(crewId, at), clock);
+      const result = stepOf(step, at, body.reason, current, this.marks.nextStart(crewId, at), clock);
       if ('refusal' in result) throw conflict(result.refusal);
       this.write(viewer, crewId, result.effect);
     });
@@ -82,11 +67,11 @@ export class ShiftMarksService {
       return added;
     });
     this.announce(crewId, Date.parse(body.start), body.end);
-    return this.get(id);
+    return this.found(id);
   }
 
   change(viewer: Viewer, id: number, body: ShiftBody): Shift {
-    const before = this.get(id);
+    const before = this.found(id);
     this.database.transaction((tx) => {
       this.checkFree(before.crewId, body, id);
       const startAt = Date.parse(body.start);
@@ -101,11 +86,11 @@ export class ShiftMarksService {
     });
     const end = before.end === null || body.end === null ? null : Math.max(before.end, Date.parse(body.end));
     this.announce(before.crewId, Math.min(before.start, Date.parse(body.start)), end);
-    return this.get(id);
+    return this.found(id);
   }
 
   remove(viewer: Viewer, id: number): void {
-    const before = this.get(id);
+    const before = this.found(id);
     this.database.transaction((tx) => {
       tx.delete(shifts).where(eq(shifts.id, id)).run();
       const subject = this.crew(before.crewId).name;
@@ -114,75 +99,16 @@ export class ShiftMarksService {
     this.announce(before.crewId, before.start, before.end);
   }
 
-  private get(id: number): Shift {
-    const row = this.database.select().from(shifts).where(eq(shifts.id, id)).get();
-    if (!row) throw notFound('This shift');
-    return this.withPauses([row])[0]!;
+  private found(id: number): Shift {
+    const shift = this.marks.get(id);
+    if (!shift) throw notFound('This shift');
+    return shift;
   }
 
   private crew(id: number) {
     const crew = this.database.select().from(crews).where(eq(crews.id, id)).get();
     if (!crew) throw notFound('This crew');
     return crew;
-  }
-
-  private withPauses(rows: (typeof shifts.$inferSelect)[]): Shift[] {
-    const pauses = this.database
-      .select()
-      .from(shiftPauses)
-      .where(
-        inArray(
-          shiftPauses.shiftId,
-          rows.map(({ id }) => id),
-        ),
-      )
-      .orderBy(asc(shiftPauses.startAt))
-      .all();
-    return rows.map(({ id, crewId, startAt, endAt, startedBy, endedBy }) => ({
-      id,
-      crewId,
-      start: startAt,
-      end: endAt,
-      startedBy,
-      endedBy,
-      pauses: pauses
-        .filter(({ shiftId }) => shiftId === id)
-        .map((pause) => ({
-          start: pause.startAt,
-          end: pause.endAt,
-          reason: pause.reason,
-          by: pause.markedBy,
-        })),
-    }));
-  }
-
-  private markedAt(crewId: number, at: number): StepShift | null {
-    const row = this.database
-      .select({ id: shifts.id, start: shifts.startAt, end: shifts.endAt, endedBy: shifts.endedBy })
-      .from(shifts)
-      .where(
-        and(
-          eq(shifts.crewId, crewId),
-          lt(shifts.startAt, at + 1),
-          or(isNull(shifts.endAt), gt(shifts.endAt, at)),
-        ),
-      )
-      .get();
-    if (!row) return null;
-    const pauses = this.database
-      .select({ id: shiftPauses.id, start: shiftPauses.startAt, end: shiftPauses.endAt })
-      .from(shiftPauses)
-      .where(eq(shiftPauses.shiftId, row.id))
-      .orderBy(asc(shiftPauses.startAt))
-      .all();
-    const { id, start, end, endedBy } = row;
-    return {
-      id,
-      start,
-      end,
-      isFinished: endedBy !== null && end !== null && end <= this.clock.now(),
-      pauses,
-    };
   }
 
   private plannedAt(
@@ -192,7 +118,7 @@ export class ShiftMarksService {
     zone: string,
   ): StepShift | null {
     const day = localDayOf(at, zone);
-    const marks = this.list(crewId, { start: day.start - 86_400_000, end: day.end + 86_400_000 });
+    const marks = this.marks.list(crewId, { start: day.start - 86_400_000, end: day.end + 86_400_000 });
     const planned = crewShiftsOf(
       { start: at, end: at + 1 },
       marks,
@@ -204,17 +130,6 @@ export class ShiftMarksService {
     return planned
       ? { id: null, start: planned.start, end: planned.end, isFinished: false, pauses: [] }
       : null;
-  }
-
-  /** Start of the first shift marked after an instant. */
-  private nextStart(crewId: number, at: number): number | null {
-    const next = this.database
-      .select({ start: shifts.startAt })
-      .from(shifts)
-      .where(and(eq(shifts.crewId, crewId), gt(shifts.startAt, at)))
-      .orderBy(asc(shifts.startAt))
-      .get();
-    return next?.start ?? null;
   }
 
   private write(viewer: Viewer, crewId: number, effect: StepEffect): void {

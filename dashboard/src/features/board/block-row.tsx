@@ -1,4 +1,3 @@
-import { causeLabels } from '@hubtack/contracts/lost-fixes/cause.js';
 import { Link } from 'react-router-dom';
 import { TakeButton } from '../../components/take-button';
 import { useOpenLostFixes, useServerNow } from '../../live/use-lanes';
@@ -16,7 +15,7 @@ export function BlockRow({ id, canAct }: { id: number; canAct: boolean }) {
   return (
     <div className="board-block" role="row" aria-label={`Mount point ${mountPoint}`}>
       <div role="cell">
-        <strong>{mountPoint}</strong> {causeLabels.mountPointDown.toLowerCase()}, {duration(now - startAt)}.{' '}
+        <strong>Corrections stopped at {mountPoint}</strong> for {duration(now - startAt)}.{' '}
         {members > 0
           ? `${members} ${members === 1 ? 'crew has' : 'crews have'} lost the fix.`
           : 'No fix is lost yet.'}{' '}
