@@ -1,4 +1,5 @@
 import { LostFixWatch } from '@hubtack/backend/lost-fixes/lost-fix.watch.js';
+import { FiguresToDo } from '@hubtack/backend/fixes/figures-to-do.repository.js';
 import { FiguresKeeper } from '@hubtack/backend/weekly/figures.keeper.js';
 import type { Interval } from '@hubtack/backend/common/interval.js';
 import { isoWeekInterval, isoWeekOf, localDayOf } from '@hubtack/backend/common/local-day.js';
@@ -224,6 +225,9 @@ describe('what comes late', () => {
     expect(await fixed()).toEqual([240, 240, 240, 0, 0, 0, 0]);
     const others = (await weekOf(LATE_WEEK)).shifts.filter(({ day }) => !day.endsWith('-04'));
     await report(at(1, 11), at(1, 13));
+    // Two hours are worked out again, not everything that came after them.
+    const again = server.app.get(FiguresToDo).some(500);
+    expect(again.reduce((sum, one) => sum + one.end - one.start, 0)).toBeLessThan(3 * 3_600_000);
     server.app.get(FiguresKeeper).tick(1000);
     expect(await fixed()).toEqual([240, 360, 240, 0, 0, 0, 0]);
     expect((await weekOf(LATE_WEEK)).shifts.filter(({ day }) => !day.endsWith('-04'))).toEqual(others);
@@ -234,6 +238,33 @@ describe('what comes late', () => {
     await until(() => weekOf(LATE_WEEK));
     expect(await weekOf(LATE_WEEK)).toEqual(before);
   });
+});
+
+it('sentences five minutes old, in order, count as within tolerance though today was looked at meanwhile', async () => {
+  const { id, key } = await server.makeRover('R-11');
+  const crew = await server.makeCrew('Casuarina');
+  server.database.insert(roverAssignments).values({ roverId: id, crewId: crew, startAt: 0 }).run();
+  const report = async (from: number, seconds: number) => {
+    const epochs = Array.from({ length: seconds / 5 }, (_, index) => ({
+      time: new Date(from + index * 5000).toISOString(),
+      quality: 4,
+      ageSeconds: 1,
+      hdop: 0.7,
+      satellites: 20,
+    }));
+    expect((await post(key, epochs)).status).toBe(200);
+  };
+  const noon = server.clock.now();
+  await report(noon - 60 * S, 60);
+  const look = () => server.app.get(FiguresKeeper).flush();
+  server.clock.set(noon + 5 * MIN);
+  look();
+  await report(noon, 290);
+  look();
+  const [row] = (await weekOf(isoWeekOf(noon, ZONE))).crews.filter(
+    ({ crewName }) => crewName === 'Casuarina',
+  );
+  expect(row?.figures.withinToleranceMs).toBe(355 * S);
 });
 
 describe('what is asked wrongly', () => {

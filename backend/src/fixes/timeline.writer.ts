@@ -18,8 +18,8 @@ import {
 } from './timeline.js';
 import { TrackStore } from './track.store.js';
 
-/** Older than this when it comes, a sentence was stored somewhere. */
-const STORED_MS = 10 * 60_000;
+/** Older than this when it comes, a sentence was stored somewhere; what is younger, today's figures take in by themselves. */
+export const STORED_MS = 10 * 60_000;
 
 export interface Written {
   accepted: number;
@@ -45,6 +45,8 @@ export interface RoverChange {
 export class TimelineWriter {
   private touched = new Map<number, RoverChange>();
   private late = new Map<number, number[]>();
+  /** Times of sentences that came in order, but old. */
+  private stored = new Map<number, number[]>();
 
   constructor(
     private readonly epochs: EpochRepository,
@@ -57,18 +59,23 @@ export class TimelineWriter {
   begin(): void {
     this.touched = new Map();
     this.late = new Map();
+    this.stored = new Map();
   }
 
   write(roverId: number, epochs: readonly Epoch[], sigmas: readonly LateSigmas[]): Written {
     const change = this.changeOf(roverId);
+    const storedBefore = this.clock.now() - STORED_MS;
     const written: Written = { accepted: 0, duplicates: 0 };
     for (const epoch of epochs) {
       if (this.epochs.insert(roverId, epoch)) {
         written.accepted++;
         change.from = Math.min(change.from ?? Infinity, epoch.time);
         const { tail } = change.track;
-        if (tail !== null && epoch.time <= tail.lastTime) this.addLate(roverId, epoch.time);
-        else this.advance(change, epoch);
+        if (tail !== null && epoch.time <= tail.lastTime) addTo(this.late, roverId, epoch.time);
+        else {
+          this.advance(change, epoch);
+          if (epoch.time < storedBefore) addTo(this.stored, roverId, epoch.time);
+        }
       } else written.duplicates++;
     }
     for (const late of sigmas) this.epochs.addSigmas(roverId, late);
@@ -90,11 +97,9 @@ export class TimelineWriter {
 
   /** Sentences that were stored while out of coverage come in order, and change figures of the past all the same. */
   private noteStored(): void {
-    const now = this.clock.now();
-    for (const { roverId, track, from } of this.touched.values()) {
-      if (from === null || from > now - STORED_MS || track.tail === null) continue;
-      this.toDo.add({ roverId, start: from, end: Math.min(track.tail.lastTime, now) + HOLD_MS });
-    }
+    for (const [roverId, times] of this.stored)
+      for (const { first, last } of stretchesOf(times, 2 * HOLD_MS))
+        this.toDo.add({ roverId, start: first, end: last + HOLD_MS });
   }
 
   /** The commit held: tracks move, and the caller tells others. */
@@ -110,12 +115,6 @@ export class TimelineWriter {
       this.touched.set(roverId, change);
     }
     return change;
-  }
-
-  private addLate(roverId: number, time: number): void {
-    const times = this.late.get(roverId);
-    if (times) times.push(time);
-    else this.late.set(roverId, [time]);
   }
 
   private advance(change: RoverChange, epoch: Epoch): void {
@@ -160,4 +159,10 @@ export class TimelineWriter {
     for (const span of before) this.spans.delete(roverId, span.start);
     for (const span of after) this.spans.insert(roverId, span);
   }
+}
+
+function addTo(lists: Map<number, number[]>, roverId: number, time: number): void {
+  const times = lists.get(roverId);
+  if (times) times.push(time);
+  else lists.set(roverId, [time]);
 }

@@ -20,6 +20,7 @@ import { DATABASE } from '../database/database.module.js';
 import { FiguresToDo, type ToDo } from '../fixes/figures-to-do.repository.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import { HOLD_MS } from '../fixes/timeline.js';
+import { STORED_MS } from '../fixes/timeline.writer.js';
 import { detectorLimitsOf } from '../lost-fixes/detector.js';
 import { RosterRepository } from '../rovers/roster.repository.js';
 import { SettingsService } from '../settings/settings.service.js';
@@ -172,7 +173,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     const known = this.live.get(roverId) ?? { at: 0, from: this.workedOutTo(roverId) };
     if (now - known.at < freshMs) return;
     this.work({ roverId, start: known.from, end: now, parts: [] });
-    this.live.set(roverId, { at: now, from: now - HOLD_MS });
+    this.live.set(roverId, { at: now, from: now - STORED_MS });
   }
 
   /** Where to begin after a start: the last day that has rows may have been worked out before it was over. */
