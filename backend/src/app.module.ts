@@ -8,6 +8,7 @@ import { ChangesModule } from './common/changes.js';
 import { ClockModule } from './common/clock.js';
 import { ConfigModule } from './config/config.module.js';
 import type { Environment } from './config/environment.js';
+import { ControlPointsModule } from './control-points/control-points.module.js';
 import { CorrectionsModule } from './corrections/corrections.module.js';
 import { CrewDayModule } from './crew-day/crew-day.module.js';
 import { CrewsModule } from './crews/crews.module.js';
@@ -15,6 +16,7 @@ import { DatabaseModule } from './database/database.module.js';
 import { DisplaysModule } from './displays/displays.module.js';
 import { FixesModule } from './fixes/fixes.module.js';
 import { HealthModule } from './health/health.module.js';
+import { ImportsModule } from './imports/imports.module.js';
 import { IngestModule } from './ingest/ingest.module.js';
 import { LostFixesModule } from './lost-fixes/lost-fixes.module.js';
 import { MetricsModule } from './metrics/metrics.module.js';
@@ -51,6 +53,8 @@ export class AppModule {
         SettingsModule,
         CrewsModule,
         SitesModule,
+        ControlPointsModule,
+        ImportsModule,
         RoversModule,
         CorrectionsModule,
         FixesModule,

@@ -1,5 +1,6 @@
 // The one list of tables, for drizzle-kit and for the typed client.
 export * from './audit-entries.js';
+export * from './control-points.js';
 export * from './correction-sources.js';
 export * from './crews.js';
 export * from './display-links.js';

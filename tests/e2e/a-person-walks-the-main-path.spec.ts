@@ -197,6 +197,8 @@ describe('axe finds nothing serious', () => {
       '/rovers/1',
       '/corrections',
       '/sites',
+      '/control-points',
+      '/imports/sites',
       '/users',
       '/settings',
       '/sentence-reader',

@@ -36,6 +36,11 @@ export const router = createBrowserRouter([
       { path: '/crews/:id/days/:date', element: page(() => import('../features/crew-day/crew-day-page')) },
       { path: '/crews', element: page(() => import('../features/crews/crews-page')) },
       { path: '/sites', element: page(() => import('../features/sites/sites-page')) },
+      {
+        path: '/control-points',
+        element: page(() => import('../features/control-points/control-points-page')),
+      },
+      { path: '/imports/:kind', element: page(() => import('../features/imports/imports-page')) },
       { path: '/rovers', element: page(() => import('../features/rovers/rovers-page')) },
       { path: '/rovers/:id', element: page(() => import('../features/rovers/rover-page')) },
       { path: '/corrections', element: page(() => import('../features/corrections/corrections-page')) },

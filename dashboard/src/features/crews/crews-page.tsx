@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
 import { Form } from '../../components/form';
 import { ChoiceField, InUseField, NumberField, TextField } from '../../components/form-fields';
+import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
 import { Sheet } from '../../components/sheet';
@@ -119,9 +120,12 @@ export default function CrewsPage() {
       query={query}
       action={
         mayChange && (
-          <Button appearance="primary" onClick={() => setOpen('new')}>
-            Add a crew
-          </Button>
+          <div className="page-actions">
+            <ImportLink kind="crews" />
+            <Button appearance="primary" onClick={() => setOpen('new')}>
+              Add a crew
+            </Button>
+          </div>
         )
       }
     >

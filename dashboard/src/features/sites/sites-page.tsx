@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
 import { Form } from '../../components/form';
 import { InUseField, NoteField, NumberField, TextField } from '../../components/form-fields';
+import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
 import { Sheet } from '../../components/sheet';
@@ -77,9 +78,12 @@ export default function SitesPage() {
       query={query}
       action={
         mayChange && (
-          <Button appearance="primary" onClick={() => setOpen('new')}>
-            Add a site
-          </Button>
+          <div className="page-actions">
+            <ImportLink kind="sites" />
+            <Button appearance="primary" onClick={() => setOpen('new')}>
+              Add a site
+            </Button>
+          </div>
         )
       }
     >
