@@ -57,7 +57,7 @@ export function ImportPreviewPart({ preview: { rows }, isPending, onImport }: Pr
           { name: 'What', cell: whatHappens },
         ]}
       />
-      <div className="form-buttons">
+      <div className="form-buttons import-go">
         <Button
           appearance="primary"
           size="large"
