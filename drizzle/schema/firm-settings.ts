@@ -1,3 +1,4 @@
+import { mondayToFriday, type ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { defaultLimits, type Limits } from '@hubtack/contracts/lost-fixes/limits.js';
 import { topographic, type ToleranceProfile } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
@@ -15,6 +16,11 @@ export const firmSettings = sqliteTable('firm_settings', {
     .$type<ToleranceProfile>()
     .notNull()
     .default(topographic),
+  /** The pattern that a new crew begins with. */
+  workingWeek: text('working_week', { mode: 'json' })
+    .$type<ShiftPatternDay[]>()
+    .notNull()
+    .default(mondayToFriday),
   /** Local hour of Monday at which the week goes out by mail. */
   weeklyMailHour: integer('weekly_mail_hour').notNull().default(7),
   limits: text('limits', { mode: 'json' }).$type<Limits>().notNull().default(defaultLimits),

@@ -97,3 +97,22 @@ it('2,000 sites in one list', async () => {
     changed: 0,
   });
 });
+
+it('a crew without days of its own begins with the firm’s working week; crews that are there keep theirs', async () => {
+  const manager = await server.as('manager');
+  const settings = await manager.json<Record<string, unknown>>('GET', '/api/settings');
+  const workingWeek = [{ weekday: 6, start: '09:00', end: '12:00' }];
+  await manager.json('PUT', '/api/settings', { ...settings, workingWeek });
+  const text = 'name\nBanksia\nAlder\n';
+  const { fingerprint } = await preview('crews', text);
+  await technician.json('POST', '/api/imports/crews', { text, fingerprint });
+  const crews = await technician.json<Crew[]>('GET', '/api/crews');
+  expect(crews.find(({ name }) => name === 'Banksia')?.pattern).toEqual(workingWeek);
+  expect(crews.find(({ name }) => name === 'Alder')?.pattern).toHaveLength(5);
+  const doubled = [workingWeek[0], workingWeek[0]];
+  const answer = await manager.call('PUT', '/api/settings', { ...settings, workingWeek: doubled });
+  expect(answer.status).toBe(400);
+  expect(await answer.json()).toMatchObject({
+    errors: [{ pointer: '/workingWeek', detail: 'One line for each weekday' }],
+  });
+});

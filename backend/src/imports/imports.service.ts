@@ -16,6 +16,7 @@ import type { Viewer } from '../auth/access.js';
 import { Changes } from '../common/changes.js';
 import { conflict, ProblemException } from '../common/problem.exception.js';
 import { DATABASE } from '../database/database.module.js';
+import { SettingsService } from '../settings/settings.service.js';
 import { ListProblem, readListText, type ListRow } from './list-text.js';
 import { planImport, type Existing, type ListShape, type PlannedRow } from './plan.js';
 import { controlPointShape, crewShape, siteShape } from './shapes.js';
@@ -35,6 +36,7 @@ export class ImportsService {
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly audit: AuditService,
     private readonly changes: Changes,
+    private readonly settings: SettingsService,
   ) {}
 
   /** What a list would do, row by row. Changes nothing. */
@@ -82,6 +84,7 @@ export class ImportsService {
     const shape = crewShape({
       siteNames: new Map(siteRows.map(({ id, name }) => [id, name])),
       maySetRates: viewer.role === 'manager',
+      workingWeek: this.settings.get().workingWeek,
     });
     return this.work(viewer, 'crew', shape, list, this.database.select().from(crews).all(), {
       insert: (body) => this.database.insert(crews).values(body).run(),

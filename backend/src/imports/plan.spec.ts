@@ -57,9 +57,10 @@ it('a control point needs its place; the height counts from the ellipsoid where 
 });
 
 describe('crews', () => {
+  const workingWeek = [{ weekday: 6, start: '09:00', end: '12:00' }];
   const crews = (text: string, maySetRates = true) =>
     planImport(
-      crewShape({ siteNames: new Map([[7, 'Quarry']]), maySetRates }),
+      crewShape({ siteNames: new Map([[7, 'Quarry']]), maySetRates, workingWeek }),
       readListText(text, importColumns.crews),
       [],
     );
@@ -85,6 +86,9 @@ describe('crews', () => {
     const [row] = crews(`name,${text}`);
     expect(row).toMatchObject({ action: 'wrong', write: null });
     expect(row!.errors).toContainEqual({ column, detail });
+  });
+  it('without a working week of its own, the firm’s', () => {
+    expect(crews('name\nAlder')[0]!.write?.body.pattern).toEqual(workingWeek);
   });
   it('only a manager sets rates', () => {
     expect(crews('name,hourly rate\nA,95', false)).toMatchObject([

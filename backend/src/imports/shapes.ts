@@ -40,14 +40,16 @@ interface CrewSurroundings {
   siteNames: ReadonlyMap<number, string>;
   /** Rates are the manager's business. */
   maySetRates: boolean;
+  /** What a new crew begins with. */
+  workingWeek: ShiftPatternDay[];
 }
 
-export function crewShape({ siteNames, maySetRates }: CrewSurroundings): ListShape<CrewBody> {
+export function crewShape({ siteNames, maySetRates, workingWeek }: CrewSurroundings): ListShape<CrewBody> {
   const siteIds = new Map([...siteNames].map(([id, name]) => [name.toLowerCase(), id]));
   const columns: Record<string, string> = { siteId: 'site', hourlyRate: 'hourly rate', pattern: 'days' };
   return {
     schema: crewBody,
-    blank: { phone: null, siteId: null, hourlyRate: null, pattern: [] },
+    blank: { phone: null, siteId: null, hourlyRate: null, pattern: workingWeek },
     read: (cell) => ({
       phone: cell('phone', asItIs),
       siteId: cell('site', (text) => {

@@ -1,4 +1,5 @@
 import { Inject, Injectable } from '@nestjs/common';
+import { mondayToFriday } from '@hubtack/contracts/crews/crew.js';
 import { defaultLimits } from '@hubtack/contracts/lost-fixes/limits.js';
 import type { Settings, SettingsBody } from '@hubtack/contracts/settings/settings.js';
 import { topographic } from '@hubtack/contracts/weekly/tolerance-profile.js';
@@ -19,6 +20,7 @@ const defaults: Settings = {
   keepPositionsOffShift: false,
   limits: defaultLimits,
   toleranceProfile: topographic,
+  workingWeek: mondayToFriday,
   weeklyMailHour: 7,
 };
 
@@ -43,6 +45,7 @@ export class SettingsService {
       ...body,
       limits: body.limits ?? before.limits,
       toleranceProfile: body.toleranceProfile ?? before.toleranceProfile,
+      workingWeek: body.workingWeek ?? before.workingWeek,
       weeklyMailHour: body.weeklyMailHour ?? before.weeklyMailHour,
     };
     this.database.transaction((tx) => {

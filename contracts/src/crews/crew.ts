@@ -10,6 +10,20 @@ export const shiftPatternDay = z.object({
   end: clockTime,
 });
 export type ShiftPatternDay = z.infer<typeof shiftPatternDay>;
+/** Until a firm says otherwise. */
+export const mondayToFriday: ShiftPatternDay[] = [1, 2, 3, 4, 5].map((weekday) => ({
+  weekday,
+  start: '07:00',
+  end: '15:30',
+}));
+
+export const shiftPattern = z
+  .array(shiftPatternDay)
+  .max(7)
+  .refine(
+    (days) => new Set(days.map((day) => day.weekday)).size === days.length,
+    'One line for each weekday',
+  );
 
 export const crewBody = z.object({
   name: shortText('the name of the crew'),
@@ -21,13 +35,7 @@ export const crewBody = z.object({
     .nullable(),
   siteId: id.nullable(),
   hourlyRate: z.number().min(0, 'Not below zero').max(100_000).nullable(),
-  pattern: z
-    .array(shiftPatternDay)
-    .max(7)
-    .refine(
-      (days) => new Set(days.map((day) => day.weekday)).size === days.length,
-      'One line for each weekday',
-    ),
+  pattern: shiftPattern,
 });
 export type CrewBody = z.infer<typeof crewBody>;
 

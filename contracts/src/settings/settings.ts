@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { shortText } from '../common.js';
+import { shiftPattern } from '../crews/crew.js';
 import { limits } from '../lost-fixes/limits.js';
 import { toleranceProfile } from '../weekly/tolerance-profile.js';
 
@@ -21,9 +22,21 @@ export const settings = z.object({
   keepPositionsOffShift: z.boolean(),
   limits,
   toleranceProfile,
+  /** The pattern that a new crew begins with. */
+  workingWeek: shiftPattern,
   weeklyMailHour: z.number().int('A whole hour').min(0).max(23),
 });
 export type Settings = z.infer<typeof settings>;
 /** What is left out stays as it is. */
-export const settingsBody = settings.partial({ limits: true, toleranceProfile: true, weeklyMailHour: true });
+export const settingsBody = settings.partial({
+  limits: true,
+  toleranceProfile: true,
+  workingWeek: true,
+  weeklyMailHour: true,
+});
+/** With what whoever runs the server has set. */
+export const shownSettings = settings.extend({
+  rawEpochDays: z.number().describe('Days for which single positions are kept'),
+});
+export type ShownSettings = z.infer<typeof shownSettings>;
 export type SettingsBody = z.infer<typeof settingsBody>;

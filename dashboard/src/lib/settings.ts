@@ -1,4 +1,4 @@
-import { settings, type Settings } from '@hubtack/contracts/settings/settings.js';
+import { settings, shownSettings, type Settings } from '@hubtack/contracts/settings/settings.js';
 import { queryOptions } from '@tanstack/react-query';
 import { api } from './api';
 import { meQuery } from './session';
@@ -6,7 +6,7 @@ import { useChange } from './use-change';
 
 export const settingsQuery = queryOptions({
   queryKey: ['settings'],
-  queryFn: () => api(settings, 'GET', '/api/settings'),
+  queryFn: () => api(shownSettings, 'GET', '/api/settings'),
 });
 
 export const useChangeSettings = () =>

@@ -14,8 +14,8 @@ import { useMe } from '../../lib/session';
 import { settingsQuery } from '../../lib/settings';
 import { sitesQuery } from '../../lib/sites';
 import { CrewToday } from './crew-today';
-import { PatternFields } from './pattern-fields';
-import { weekdays } from './weekdays';
+import { PatternFields } from '../../components/pattern-fields';
+import { weekdays } from '../../lib/weekdays';
 
 function Fields() {
   const { data: sites = [] } = useQuery(sitesQuery);
@@ -49,7 +49,9 @@ function Fields() {
 
 function AddCrew({ onDone }: { onDone: () => void }) {
   const add = useAddCrew();
-  const pattern = [1, 2, 3, 4, 5].map((weekday) => ({ weekday, start: '07:00', end: '15:30' }));
+  const { data: settings } = useQuery(settingsQuery);
+  if (!settings) return null;
+  const pattern = settings.workingWeek;
   return (
     <Sheet title="Add a crew" onClose={onDone}>
       <Form

@@ -1,4 +1,4 @@
-import { settings, type Settings } from '@hubtack/contracts/settings/settings.js';
+import { settings, type ShownSettings } from '@hubtack/contracts/settings/settings.js';
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Form } from '../../components/form';
@@ -7,6 +7,7 @@ import { ListPage } from '../../components/list-page';
 import { HolidaysPart } from './holidays-part';
 import { PreviewPart } from './preview-part';
 import './settings.css';
+import { PatternFields } from '../../components/pattern-fields';
 import { settingsQuery, useChangeSettings } from '../../lib/settings';
 
 const limitFields = [
@@ -51,7 +52,7 @@ function ToleranceFields() {
   );
 }
 
-function SettingsForm({ current }: { current: Settings }) {
+function SettingsForm({ current }: { current: ShownSettings }) {
   const change = useChangeSettings();
   const [isSaved, setIsSaved] = useState(false);
   return (
@@ -97,6 +98,11 @@ function SettingsForm({ current }: { current: Settings }) {
             { value: 'true', label: 'Keep them as long as raw epochs' },
           ]}
         />
+        <PatternFields
+          name="workingWeek"
+          legend="Working week"
+          hint="What a new crew begins with, one by one or imported. Crews that are there keep their own pattern."
+        />
         <LimitFields />
         <ToleranceFields />
         <PreviewPart />
@@ -108,6 +114,12 @@ function SettingsForm({ current }: { current: Settings }) {
         />
       </Form>
       {isSaved && <p role="status">Saved.</p>}
+      <h2>What is kept</h2>
+      <p>
+        Single positions are kept for {current.rawEpochDays} days and dropped then; time by state, lost fixes
+        and the figures of every week stay. A changed tolerance profile counts for as far back as single
+        positions go. Whoever runs the server sets the days (RAW_EPOCH_DAYS).
+      </p>
     </div>
   );
 }

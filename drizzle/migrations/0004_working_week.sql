@@ -1,0 +1,1 @@
+ALTER TABLE `firm_settings` ADD `working_week` text DEFAULT '[{"weekday":1,"start":"07:00","end":"15:30"},{"weekday":2,"start":"07:00","end":"15:30"},{"weekday":3,"start":"07:00","end":"15:30"},{"weekday":4,"start":"07:00","end":"15:30"},{"weekday":5,"start":"07:00","end":"15:30"}]' NOT NULL;
