@@ -3,7 +3,7 @@ import type { ReactNode } from 'react';
 import { Navigate, useLocation } from 'react-router-dom';
 import { Failed, Loading } from '../components/query-states';
 import { LiveProvider } from '../live/live-context';
-import { meQuery } from '../lib/session';
+import { meQuery, SignedIn } from '../lib/session';
 
 /** Pages behind the sign-in. Who has none is asked for one, and comes back to where they were. */
 export function RequireSignIn({ children }: { children: ReactNode }) {
@@ -14,5 +14,9 @@ export function RequireSignIn({ children }: { children: ReactNode }) {
   if (error && me === undefined) return <Failed error={error} retry={() => void refetch()} />;
   if (!me) return <Navigate to="/sign-in" replace state={{ from: location.pathname }} />;
   if (me.role === 'display' && location.pathname !== '/wall') return <Navigate to="/wall" replace />;
-  return <LiveProvider>{children}</LiveProvider>;
+  return (
+    <SignedIn value={me}>
+      <LiveProvider>{children}</LiveProvider>
+    </SignedIn>
+  );
 }

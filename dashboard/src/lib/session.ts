@@ -1,12 +1,6 @@
 import { me, signInHints, type Me, type SignInBody } from '@hubtack/contracts/auth/sign-in.js';
-import {
-  type QueryClient,
-  queryOptions,
-  useMutation,
-  useQuery,
-  useQueryClient,
-  useSuspenseQuery,
-} from '@tanstack/react-query';
+import { type QueryClient, queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { createContext, useContext } from 'react';
 import { ApiError, api, apiVoid } from './api';
 
 const overCodes = ['unauthenticated', 'signInEnded', 'tokenReused'];
@@ -25,11 +19,18 @@ export const meQuery = queryOptions({
   },
 });
 
+const MeContext = createContext<Me | null>(null);
+/**
+ * Around the pages behind the sign-in. They take who is signed in from here and not from the query: when a sign-in
+ * ends, what is still on the screen for a moment must not find nobody.
+ */
+export const SignedIn = MeContext.Provider;
+
 /** The person or display on whose behalf the page runs; pages behind the sign-in always have one. */
 export function useMe(): Me {
-  const { data } = useSuspenseQuery(meQuery);
-  if (!data) throw new Error('This page needs a sign-in');
-  return data;
+  const signedIn = useContext(MeContext);
+  if (!signedIn) throw new Error('This page needs a sign-in');
+  return signedIn;
 }
 
 export const useSignInHints = () =>
@@ -61,7 +62,9 @@ export function useSignOut() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: () => apiVoid('POST', '/api/auth/sign-out'),
-    onSettled: () => {
+    onSettled: async () => {
+      // An answer that is still on its way would sign the page in again.
+      await client.cancelQueries({ queryKey: meQuery.queryKey });
       client.setQueryData(meQuery.queryKey, null);
       forgetOthers(client);
     },

@@ -7,7 +7,7 @@ import { LiveProvider } from '../../live/live-context';
 import { StreamState } from '../../live/stream-state';
 import { useLanes, useOpenLostFixes, useServerNow } from '../../live/use-lanes';
 import { clockTime, zoneName } from '../../lib/format';
-import { meQuery, useMe, useSigningIn } from '../../lib/session';
+import { meQuery, SignedIn, useMe, useSigningIn } from '../../lib/session';
 import { isOnShift } from './filter';
 import { LaneList } from './lane-list';
 import { StateCounts } from './state-counts';
@@ -59,8 +59,10 @@ export default function WallPage() {
   if (isPending || opening.isPending) return <Loading what="the wall board" />;
   if (!data) return <Navigate to="/sign-in" replace state={{ from: '/wall' }} />;
   return (
-    <LiveProvider>
-      <Wall />
-    </LiveProvider>
+    <SignedIn value={data}>
+      <LiveProvider>
+        <Wall />
+      </LiveProvider>
+    </SignedIn>
   );
 }
