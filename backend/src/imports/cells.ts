@@ -1,3 +1,4 @@
+import { heightKind, type HeightKind } from '@hubtack/contracts/control-points/control-point.js';
 import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 
 /** A cell cannot be read; the message says what to write. */
@@ -10,11 +11,11 @@ export function numberCell(cell: string): number {
   return Number(plain.replace(',', '.'));
 }
 
-const DAYS = ['mon', 'tue', 'wed', 'thu', 'fri', 'sat', 'sun'];
+const DAYS = ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun'];
 const DAYS_HINT = 'Write days such as Mon-Fri, or Mon Wed Sat';
 
 function dayNumber(word: string): number {
-  const index = word.length < 3 ? -1 : DAYS.indexOf(word.slice(0, 3).toLowerCase());
+  const index = DAYS.findIndex((day) => day.toLowerCase() === word.slice(0, 3).toLowerCase());
   if (index < 0) throw new CellProblem(DAYS_HINT);
   return index + 1;
 }
@@ -42,16 +43,15 @@ export function timeCell(cell: string): string {
 }
 
 /** @throws CellProblem */
-export function heightKindCell(cell: string): 'ellipsoidal' | 'geoid' {
-  const word = cell.toLowerCase();
-  if (word === 'ellipsoidal' || word === 'geoid') return word;
-  throw new CellProblem('Write ellipsoidal or geoid');
+export function heightKindCell(cell: string): HeightKind {
+  const kind = heightKind.safeParse(cell.toLowerCase());
+  if (!kind.success) throw new CellProblem(`Write ${heightKind.options.join(' or ')}`);
+  return kind.data;
 }
 
-const DAY_NAMES = ['Mon', 'Tue', 'Wed', 'Thu', 'Fri', 'Sat', 'Sun'];
 /** A pattern in words, for before and after. */
 export const patternWords = (pattern: readonly ShiftPatternDay[]): string =>
   pattern
     .toSorted((a, b) => a.weekday - b.weekday)
-    .map(({ weekday, start, end }) => `${DAY_NAMES[weekday - 1]} ${start}-${end}`)
+    .map(({ weekday, start, end }) => `${DAYS[weekday - 1]} ${start}-${end}`)
     .join(', ');

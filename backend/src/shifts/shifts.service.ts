@@ -3,8 +3,7 @@ import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { roverAssignments } from '@hubtack/drizzle/schema/rovers.js';
-import { shiftPauses, shifts } from '@hubtack/drizzle/schema/shifts.js';
-import { and, asc, eq, gt, inArray, isNull, lt, or } from 'drizzle-orm';
+import { and, asc, eq, gt, isNull, lt, or } from 'drizzle-orm';
 import { clip, type Interval } from '../common/interval.js';
 import { DATABASE } from '../database/database.module.js';
 import { clipSpans } from '../fixes/timeline.js';
@@ -12,6 +11,7 @@ import { FixesService } from '../fixes/fixes.service.js';
 import { HolidaysService } from '../settings/holidays.service.js';
 import { clipShift, crewShiftsOf, type CrewShift } from './crew-shifts.js';
 import { crewDayOf, type CrewDay, type ShiftMark } from './on-shift.js';
+import { ShiftMarksRepository } from './shift-marks.repository.js';
 
 /** A shift of a crew, cut to the time in which it had a rover. */
 export interface RoverShift extends CrewShift {
@@ -23,6 +23,7 @@ export interface RoverShift extends CrewShift {
 export class ShiftsService {
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
+    private readonly shiftMarks: ShiftMarksRepository,
     private readonly fixes: FixesService,
     private readonly holidays: HolidaysService,
   ) {}
@@ -98,36 +99,11 @@ export class ShiftsService {
 
   /** Shift marks of a crew that touch a stretch of time, with their pauses. */
   private marks(crewId: number, window: Interval): ShiftMark[] {
-    const rows = this.database
-      .select({ id: shifts.id, start: shifts.startAt, end: shifts.endAt })
-      .from(shifts)
-      .where(
-        and(
-          eq(shifts.crewId, crewId),
-          lt(shifts.startAt, window.end),
-          or(isNull(shifts.endAt), gt(shifts.endAt, window.start)),
-        ),
-      )
-      .orderBy(asc(shifts.startAt))
-      .all();
-    const pauses = this.database
-      .select({ shiftId: shiftPauses.shiftId, start: shiftPauses.startAt, end: shiftPauses.endAt })
-      .from(shiftPauses)
-      .where(
-        inArray(
-          shiftPauses.shiftId,
-          rows.map(({ id }) => id),
-        ),
-      )
-      .orderBy(asc(shiftPauses.startAt))
-      .all();
-    return rows.map(({ id, start, end }) => ({
+    return this.shiftMarks.list(crewId, window).map(({ start, end, pauses }) => ({
       start,
       end,
       // A pause ends with its shift.
-      pauses: pauses
-        .filter(({ shiftId }) => shiftId === id)
-        .map((pause) => ({ start: pause.start, end: pause.end ?? end })),
+      pauses: pauses.map((pause) => ({ start: pause.start, end: pause.end ?? end })),
     }));
   }
 }

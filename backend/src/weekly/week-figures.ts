@@ -1,4 +1,4 @@
-import type { Lengths, WeekFigures } from '@hubtack/contracts/weekly/weekly.js';
+import type { Lengths, WeekFigures, WeekShift } from '@hubtack/contracts/weekly/weekly.js';
 import { noTotals, totalOf, wholeOf } from '@hubtack/contracts/fixes/totals.js';
 import { mean, percentile } from '../common/statistics.js';
 import type { NamedShiftFigures } from './shift-figures.repository.js';
@@ -46,3 +46,16 @@ export function weekFigures(rows: readonly NamedShiftFigures[], withMoney: boole
     cost: withMoney && isPriced ? Math.round(cost * 100) / 100 : null,
   };
 }
+
+/** One rover-shift as the week shows it. */
+export const weekShiftOf = (row: NamedShiftFigures, withMoney: boolean): WeekShift => ({
+  day: row.day,
+  crewId: row.crewId,
+  crewName: row.crewName,
+  roverId: row.roverId,
+  roverLabel: row.roverLabel,
+  start: row.startAt,
+  end: row.endAt,
+  basis: row.basis,
+  figures: weekFigures([row], withMoney),
+});

@@ -10,7 +10,7 @@ import { SettingsService } from '../settings/settings.service.js';
 import { FiguresKeeper } from './figures.keeper.js';
 import { LostTimeRepository, type LostTime } from './lost-time.repository.js';
 import { ShiftFiguresRepository, type NamedShiftFigures, type WeekSum } from './shift-figures.repository.js';
-import { weekFigures } from './week-figures.js';
+import { weekFigures, weekShiftOf } from './week-figures.js';
 import { groupKeyOf, weekSentence, type LostGroup } from './week-sentence.js';
 
 const TWELVE = 12;
@@ -67,17 +67,7 @@ export class WeeklyService {
       causes: causesOf(lost),
       mountPoints: mountPointsOf(rows, lost),
       rovers: roversOf(rows, lost, withMoney),
-      shifts: rows.map((row) => ({
-        day: row.day,
-        crewId: row.crewId,
-        crewName: row.crewName,
-        roverId: row.roverId,
-        roverLabel: row.roverLabel,
-        start: row.startAt,
-        end: row.endAt,
-        basis: row.basis,
-        figures: weekFigures([row], withMoney),
-      })),
+      shifts: rows.map((row) => weekShiftOf(row, withMoney)),
       profile: toleranceProfile,
     };
   }

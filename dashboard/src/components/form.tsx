@@ -6,7 +6,7 @@ import type { z } from 'zod';
 import { showFieldErrors } from '../lib/form-errors';
 import './form.css';
 
-interface FormProps<Schema extends z.ZodType<FieldValues, FieldValues>> {
+export interface FormProps<Schema extends z.ZodType<FieldValues, FieldValues>> {
   schema: Schema;
   defaults: DefaultValues<z.input<Schema>>;
   submit: (values: z.output<Schema>) => Promise<unknown>;

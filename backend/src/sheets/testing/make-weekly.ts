@@ -4,7 +4,7 @@ import type { Weekly } from '@hubtack/contracts/weekly/weekly.js';
 import { topographic } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import { isoWeekInterval } from '../../common/local-day.js';
 import type { NamedShiftFigures } from '../../weekly/shift-figures.repository.js';
-import { weekFigures } from '../../weekly/week-figures.js';
+import { weekFigures, weekShiftOf } from '../../weekly/week-figures.js';
 
 const HOUR_MS = 3_600_000;
 const ZONE = 'Australia/Hobart';
@@ -77,17 +77,7 @@ export function makeWeekly(
     causes: [],
     mountPoints: [],
     rovers: [],
-    shifts: rows.map((row) => ({
-      day: row.day,
-      crewId: row.crewId,
-      crewName: row.crewName,
-      roverId: row.roverId,
-      roverLabel: row.roverLabel,
-      start: row.startAt,
-      end: row.endAt,
-      basis: row.basis,
-      figures: weekFigures([row], withMoney),
-    })),
+    shifts: rows.map((row) => weekShiftOf(row, withMoney)),
     profile: topographic,
     ...change,
   };

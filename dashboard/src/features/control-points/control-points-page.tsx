@@ -7,12 +7,11 @@ import {
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
-import { Form } from '../../components/form';
 import { ChoiceField, InUseField, NoteField, NumberField, TextField } from '../../components/form-fields';
+import { FormSheet } from '../../components/form-sheet';
 import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
-import { Sheet } from '../../components/sheet';
 import { controlPointsQuery, useAddControlPoint, useChangeControlPoint } from '../../lib/control-points';
 
 const heightKinds = [
@@ -39,20 +38,16 @@ const Fields = () => (
 function AddControlPoint({ onDone }: { onDone: () => void }) {
   const add = useAddControlPoint();
   return (
-    <Sheet title="Add a control point" onClose={onDone}>
-      <Form
-        schema={controlPointBody}
-        defaults={{ name: '', height: null, heightKind: 'ellipsoidal', datum: null, note: null }}
-        button="Add the control point"
-        onCancel={onDone}
-        submit={async (body) => {
-          await add.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title="Add a control point"
+      schema={controlPointBody}
+      defaults={{ name: '', height: null, heightKind: 'ellipsoidal', datum: null, note: null }}
+      button="Add the control point"
+      save={add.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+    </FormSheet>
   );
 }
 
@@ -60,21 +55,17 @@ function ChangeControlPoint({ point, onDone }: { point: ControlPoint; onDone: ()
   const { id, ...defaults } = point;
   const change = useChangeControlPoint(id);
   return (
-    <Sheet title={`Change ${point.name}`} onClose={onDone}>
-      <Form
-        schema={changeControlPointBody}
-        defaults={defaults}
-        button="Save"
-        onCancel={onDone}
-        submit={async (body) => {
-          await change.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-        <InUseField name="active" inUse />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title={`Change ${point.name}`}
+      schema={changeControlPointBody}
+      defaults={defaults}
+      button="Save"
+      save={change.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+      <InUseField name="active" inUse />
+    </FormSheet>
   );
 }
 

@@ -7,11 +7,10 @@ import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { useFormContext } from 'react-hook-form';
 import { DataTable } from '../../components/data-table';
-import { Form } from '../../components/form';
 import { NumberField, TextField } from '../../components/form-fields';
+import { FormSheet } from '../../components/form-sheet';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
-import { Sheet } from '../../components/sheet';
 import {
   correctionSourcesQuery,
   useAddCorrectionSource,
@@ -62,20 +61,16 @@ interface SourceSheetProps {
 
 function SourceSheet({ title, source, button, save, onDone }: SourceSheetProps) {
   return (
-    <Sheet title={title} onClose={onDone}>
-      <Form
-        schema={correctionSourceBody}
-        defaults={source}
-        button={button}
-        onCancel={onDone}
-        submit={async (body) => {
-          await save(body);
-          onDone();
-        }}
-      >
-        <Fields />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title={title}
+      schema={correctionSourceBody}
+      defaults={source}
+      button={button}
+      save={save}
+      onDone={onDone}
+    >
+      <Fields />
+    </FormSheet>
   );
 }
 

@@ -3,12 +3,11 @@ import { changeCrewBody, crewBody, type Crew } from '@hubtack/contracts/crews/cr
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
-import { Form } from '../../components/form';
 import { ChoiceField, InUseField, NumberField, TextField } from '../../components/form-fields';
+import { FormSheet } from '../../components/form-sheet';
 import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
-import { Sheet } from '../../components/sheet';
 import { crewsQuery, useAddCrew, useChangeCrew } from '../../lib/crews';
 import { useMe } from '../../lib/session';
 import { settingsQuery } from '../../lib/settings';
@@ -53,20 +52,16 @@ function AddCrew({ onDone }: { onDone: () => void }) {
   if (!settings) return null;
   const pattern = settings.workingWeek;
   return (
-    <Sheet title="Add a crew" onClose={onDone}>
-      <Form
-        schema={crewBody}
-        defaults={{ name: '', phone: null, siteId: null, hourlyRate: null, pattern }}
-        button="Add the crew"
-        onCancel={onDone}
-        submit={async (body) => {
-          await add.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title="Add a crew"
+      schema={crewBody}
+      defaults={{ name: '', phone: null, siteId: null, hourlyRate: null, pattern }}
+      button="Add the crew"
+      save={add.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+    </FormSheet>
   );
 }
 
@@ -74,21 +69,17 @@ function ChangeCrew({ crew, onDone }: { crew: Crew; onDone: () => void }) {
   const change = useChangeCrew(crew.id);
   const { name, phone, siteId, hourlyRate, pattern, active } = crew;
   return (
-    <Sheet title={`Change ${name}`} onClose={onDone}>
-      <Form
-        schema={changeCrewBody}
-        defaults={{ name, phone, siteId, hourlyRate, pattern, active }}
-        button="Save"
-        onCancel={onDone}
-        submit={async (body) => {
-          await change.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-        <InUseField name="active" inUse />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title={`Change ${name}`}
+      schema={changeCrewBody}
+      defaults={{ name, phone, siteId, hourlyRate, pattern, active }}
+      button="Save"
+      save={change.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+      <InUseField name="active" inUse />
+    </FormSheet>
   );
 }
 

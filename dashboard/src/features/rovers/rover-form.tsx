@@ -3,6 +3,7 @@ import { useQuery } from '@tanstack/react-query';
 import { useNavigate } from 'react-router-dom';
 import { Form } from '../../components/form';
 import { ChoiceField, InUseField, TextField } from '../../components/form-fields';
+import { FormSheet } from '../../components/form-sheet';
 import { Sheet } from '../../components/sheet';
 import { correctionSourcesQuery } from '../../lib/corrections';
 import { useAddRover, useChangeRover } from '../../lib/rovers';
@@ -55,20 +56,16 @@ export function ChangeRover({ rover, onDone }: { rover: Rover; onDone: () => voi
   const change = useChangeRover(rover.id);
   const { label, receiver, serial, correctionSourceId, retired } = rover;
   return (
-    <Sheet title={`Change ${label}`} onClose={onDone}>
-      <Form
-        schema={changeRoverBody}
-        defaults={{ label, receiver, serial, correctionSourceId, retired }}
-        button="Save"
-        onCancel={onDone}
-        submit={async (body) => {
-          await change.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-        <InUseField name="retired" inUse={false} />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title={`Change ${label}`}
+      schema={changeRoverBody}
+      defaults={{ label, receiver, serial, correctionSourceId, retired }}
+      button="Save"
+      save={change.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+      <InUseField name="retired" inUse={false} />
+    </FormSheet>
   );
 }

@@ -3,12 +3,11 @@ import { changeSiteBody, siteBody, type Site } from '@hubtack/contracts/sites/si
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
-import { Form } from '../../components/form';
 import { InUseField, NoteField, NumberField, TextField } from '../../components/form-fields';
+import { FormSheet } from '../../components/form-sheet';
 import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
-import { Sheet } from '../../components/sheet';
 import { useMe } from '../../lib/session';
 import { sitesQuery, useAddSite, useChangeSite } from '../../lib/sites';
 
@@ -26,20 +25,16 @@ const Fields = () => (
 function AddSite({ onDone }: { onDone: () => void }) {
   const add = useAddSite();
   return (
-    <Sheet title="Add a site" onClose={onDone}>
-      <Form
-        schema={siteBody}
-        defaults={{ name: '', latitude: null, longitude: null, note: null }}
-        button="Add the site"
-        onCancel={onDone}
-        submit={async (body) => {
-          await add.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title="Add a site"
+      schema={siteBody}
+      defaults={{ name: '', latitude: null, longitude: null, note: null }}
+      button="Add the site"
+      save={add.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+    </FormSheet>
   );
 }
 
@@ -47,21 +42,17 @@ function ChangeSite({ site, onDone }: { site: Site; onDone: () => void }) {
   const change = useChangeSite(site.id);
   const { name, latitude, longitude, note, active } = site;
   return (
-    <Sheet title={`Change ${name}`} onClose={onDone}>
-      <Form
-        schema={changeSiteBody}
-        defaults={{ name, latitude, longitude, note, active }}
-        button="Save"
-        onCancel={onDone}
-        submit={async (body) => {
-          await change.mutateAsync(body);
-          onDone();
-        }}
-      >
-        <Fields />
-        <InUseField name="active" inUse />
-      </Form>
-    </Sheet>
+    <FormSheet
+      title={`Change ${name}`}
+      schema={changeSiteBody}
+      defaults={{ name, latitude, longitude, note, active }}
+      button="Save"
+      save={change.mutateAsync}
+      onDone={onDone}
+    >
+      <Fields />
+      <InUseField name="active" inUse />
+    </FormSheet>
   );
 }
 
