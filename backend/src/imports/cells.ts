@@ -4,10 +4,20 @@ import type { ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 /** A cell cannot be read; the message says what to write. */
 export class CellProblem extends Error {}
 
-/** A number with a decimal point or comma. @throws CellProblem */
-export function numberCell(cell: string): number {
+/**
+ * A number with a decimal point; or with a decimal comma, where the list has another sign between its columns.
+ * A comma between columns means a language that groups thousands by it, so a quoted `1,234` is not guessed at;
+ * neither is it between tabs, which every language writes. @throws CellProblem
+ */
+export function numberCell(cell: string, delimiter: string): number {
   const plain = cell.replace(/^\u2212/, '-');
-  if (!/^[+-]?\d+([.,]\d+)?$/.test(plain)) throw new CellProblem('Write a number such as 47.25');
+  const hint = 'Write a number such as 47.25';
+  if (!/^[+-]?\d+([.,]\d+)?$/.test(plain)) throw new CellProblem(hint);
+  if (plain.includes(',')) {
+    const mayBeThousands = /^[+-]?\d{1,3},\d{3}$/.test(plain);
+    if (delimiter === ',' || (delimiter !== ';' && mayBeThousands))
+      throw new CellProblem(`${hint}: the comma here can be read in two ways`);
+  }
   return Number(plain.replace(',', '.'));
 }
 

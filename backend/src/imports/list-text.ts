@@ -8,6 +8,8 @@ export interface ListRow {
   cells: Map<string, string>;
   /** More cells than the heading has columns. */
   isTooLong: boolean;
+  /** What stands between the columns of the list. */
+  delimiter: string;
 }
 
 /** Nothing of the list can be used; the message says why. */
@@ -20,7 +22,7 @@ export class ListProblem extends Error {}
 export function readListText(text: string, columns: readonly [string, ...string[]]): ListRow[] {
   if (text.includes('\0'))
     throw new ListProblem('This is not text: save the list as CSV in UTF-8, or as Unicode text.');
-  const { data, errors } = Papa.parse<string[]>(text.replace(/^\uFEFF/, ''), {
+  const { data, errors, meta } = Papa.parse<string[]>(text.replace(/^\uFEFF/, ''), {
     delimitersToGuess: [',', ';', '\t'],
   });
   const broken = errors.find(({ type }) => type === 'Quotes');
@@ -40,6 +42,7 @@ export function readListText(text: string, columns: readonly [string, ...string[
       heading.map((name, index) => [name, cells[index] ?? ''] as const).filter(([, cell]) => cell !== ''),
     ),
     isTooLong: cells.slice(heading.length).some((cell) => cell !== ''),
+    delimiter: meta.delimiter,
   }));
 }
 

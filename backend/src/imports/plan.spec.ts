@@ -27,6 +27,18 @@ it('a decimal comma, as spreadsheets of many countries write it', () => {
     { write: { body: { latitude: 47.125, longitude: -8.5 } } },
   ]);
 });
+it.each([
+  ['name,latitude\nBank,"47,125"', 'a quoted comma in a list with commas: thousands or a decimal'],
+  ['name,latitude\nBank,"47,5"', 'the same, though no thousand looks like that'],
+  ['name\tlatitude\nBank\t47,125', 'three figures after the comma, between tabs'],
+])('%j: does not guess at a comma (%s)', (text) => {
+  expect(plan(text)).toMatchObject([
+    { action: 'wrong', errors: [{ column: 'latitude', detail: expect.stringContaining('two ways') }] },
+  ]);
+});
+it('a comma between tabs that cannot be thousands is a decimal one', () => {
+  expect(plan('name\tlatitude\nBank\t47,1254')).toMatchObject([{ write: { body: { latitude: 47.1254 } } }]);
+});
 it('says what is wrong in which column, and writes nothing of that row', () => {
   const rows = plan('name,latitude,longitude\nA,91,8\nB,north,8\n,1,2\nC,1,2\nc,1,2\nD,1,2,3');
   expect(rows.map(({ row, errors }) => ({ row, errors }))).toEqual([

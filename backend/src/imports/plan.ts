@@ -9,7 +9,9 @@ export interface ListShape<Body extends { name: string }> {
   /** What a new entry has where the list says nothing; a required value may be missing. */
   blank: Partial<Body>;
   /** Reads the cells of a row into fields, asking for each by its column. */
-  read: (cell: <T>(column: string, reader: (text: string) => T) => T | undefined) => Partial<Body>;
+  read: (
+    cell: <T>(column: string, reader: (text: string, delimiter: string) => T) => T | undefined,
+  ) => Partial<Body>;
   /** The column that a field of the schema is written in. */
   columnOf: (field: string) => string;
   /** A field in words, for before and after. */
@@ -36,7 +38,7 @@ export function planImport<Body extends { name: string }>(
 ): PlannedRow<Body>[] {
   const byName = new Map(existing.map((entry) => [key(entry.name), entry]));
   const seen = new Map<string, number>();
-  return rows.map(({ row, cells, isTooLong }) => {
+  return rows.map(({ row, cells, isTooLong, delimiter }) => {
     const errors: ImportRow['errors'] = [];
     const wrong = (column: string, detail: string) => errors.push({ column, detail });
     const name = cells.get('name') ?? '';
@@ -49,7 +51,7 @@ export function planImport<Body extends { name: string }>(
       const text = cells.get(column);
       if (text === undefined) return undefined;
       try {
-        return reader(text);
+        return reader(text, delimiter);
       } catch (error) {
         if (!(error instanceof CellProblem)) throw error;
         wrong(column, error.message);

@@ -57,9 +57,9 @@ export function crewShape({ siteNames, maySetRates, workingWeek }: CrewSurroundi
         if (id === undefined) throw new CellProblem('There is no site of this name: import the sites first');
         return id;
       }),
-      hourlyRate: cell('hourly rate', (text) => {
+      hourlyRate: cell('hourly rate', (text, delimiter) => {
         if (!maySetRates) throw new CellProblem('Only a manager sets rates: leave this column out');
-        return numberCell(text);
+        return numberCell(text, delimiter);
       }),
       pattern: readPattern(
         cell('days', daysCell),
