@@ -1,5 +1,6 @@
 import { mondayToFriday, type ShiftPatternDay } from '@hubtack/contracts/crews/crew.js';
 import { defaultLimits, type Limits } from '@hubtack/contracts/lost-fixes/limits.js';
+import { defaultCheckShotLimits, type CheckShotLimits } from '@hubtack/contracts/set-up/check-shot-limits.js';
 import { topographic, type ToleranceProfile } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import { integer, sqliteTable, text } from 'drizzle-orm/sqlite-core';
 import { flag } from './columns.js';
@@ -16,6 +17,10 @@ export const firmSettings = sqliteTable('firm_settings', {
     .$type<ToleranceProfile>()
     .notNull()
     .default(topographic),
+  checkShotLimits: text('check_shot_limits', { mode: 'json' })
+    .$type<CheckShotLimits>()
+    .notNull()
+    .default(defaultCheckShotLimits),
   /** The pattern that a new crew begins with. */
   workingWeek: text('working_week', { mode: 'json' })
     .$type<ShiftPatternDay[]>()

@@ -1,5 +1,6 @@
 // The one list of tables, for drizzle-kit and for the typed client.
 export * from './audit-entries.js';
+export * from './check-shots.js';
 export * from './control-points.js';
 export * from './correction-sources.js';
 export * from './crews.js';
@@ -8,11 +9,13 @@ export * from './epochs.js';
 export * from './figures-to-do.js';
 export * from './firm-settings.js';
 export * from './holidays.js';
+export * from './logs.js';
 export * from './lost-fixes.js';
 export * from './notices.js';
 export * from './outbox.js';
 export * from './password-links.js';
 export * from './rovers.js';
+export * from './set-up-cards.js';
 export * from './shift-figures.js';
 export * from './shifts.js';
 export * from './sign-in-sessions.js';

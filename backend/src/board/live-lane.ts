@@ -98,6 +98,8 @@ export function laneOf(facts: LaneFacts, now: number): Lane {
     crewPhone: entry.crewPhone,
     siteName: entry.siteName,
     mountPoint: entry.mountPoint,
+    setUp: null,
+    checkShot: null,
     pauses: clip(facts.crewDay.pauses, { start: now - RIBBON_MS, end: now }),
   };
 }

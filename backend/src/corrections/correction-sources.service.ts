@@ -13,6 +13,28 @@ import { notFound } from '../common/problem.exception.js';
 import { uniquely } from '../common/unique.js';
 import { DATABASE } from '../database/database.module.js';
 
+const withoutPassword = ({ password: _password, ...body }: CorrectionSourceBody) => body;
+
+const viewOf = (row: typeof correctionSources.$inferSelect): CorrectionSource => ({
+  id: row.id,
+  name: row.name,
+  address: row.address,
+  port: row.port,
+  mountPoint: row.mountPoint,
+  user: row.user,
+  ntripVersion: row.ntripVersion,
+  tls: row.tls,
+  sendPosition: row.sendPosition,
+  expectedFormat: row.expectedFormat,
+  watchMinutes: row.watchMinutes,
+  baseLatitude: row.baseLatitude,
+  baseLongitude: row.baseLongitude,
+  hasPassword: row.sealedPassword !== null,
+  decodedBase: null,
+  lastCheck: null,
+  downSince: null,
+});
+
 const NAME_TAKEN = 'There is a correction source with this name already.';
 
 @Injectable()
@@ -24,15 +46,24 @@ export class CorrectionSourcesService {
   ) {}
 
   list(): CorrectionSource[] {
-    return this.database.select().from(correctionSources).orderBy(asc(correctionSources.name)).all();
+    return this.database
+      .select()
+      .from(correctionSources)
+      .orderBy(asc(correctionSources.name))
+      .all()
+      .map((row) => viewOf(row));
   }
 
   add(viewer: Viewer, body: CorrectionSourceBody): CorrectionSource {
     const added = this.database.transaction((tx) => {
       const row = uniquely('/name', NAME_TAKEN, () =>
-        tx.insert(correctionSources).values(body).returning().get(),
+        viewOf(tx.insert(correctionSources).values(withoutPassword(body)).returning().get()),
       );
-      this.audit.record(viewer, { action: 'correctionSource.added', subject: row.name, after: body });
+      this.audit.record(viewer, {
+        action: 'correctionSource.added',
+        subject: row.name,
+        after: withoutPassword(body),
+      });
       return row;
     });
     this.changes.announce({ kind: 'firm' });
@@ -44,13 +75,20 @@ export class CorrectionSourcesService {
       const before = tx.select().from(correctionSources).where(eq(correctionSources.id, id)).get();
       if (!before) throw notFound('This correction source');
       const row = uniquely('/name', NAME_TAKEN, () =>
-        tx.update(correctionSources).set(body).where(eq(correctionSources.id, id)).returning().get(),
+        viewOf(
+          tx
+            .update(correctionSources)
+            .set(withoutPassword(body))
+            .where(eq(correctionSources.id, id))
+            .returning()
+            .get(),
+        ),
       );
       this.audit.record(viewer, {
         action: 'correctionSource.changed',
         subject: before.name,
         before,
-        after: body,
+        after: withoutPassword(body),
       });
       return row;
     });

@@ -1,6 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { mondayToFriday } from '@hubtack/contracts/crews/crew.js';
 import { defaultLimits } from '@hubtack/contracts/lost-fixes/limits.js';
+import { defaultCheckShotLimits } from '@hubtack/contracts/set-up/check-shot-limits.js';
 import type { Settings, SettingsBody } from '@hubtack/contracts/settings/settings.js';
 import { topographic } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
@@ -20,6 +21,7 @@ const defaults: Settings = {
   keepPositionsOffShift: false,
   limits: defaultLimits,
   toleranceProfile: topographic,
+  checkShotLimits: defaultCheckShotLimits,
   workingWeek: mondayToFriday,
   weeklyMailHour: 7,
 };
@@ -45,6 +47,7 @@ export class SettingsService {
       ...body,
       limits: body.limits ?? before.limits,
       toleranceProfile: body.toleranceProfile ?? before.toleranceProfile,
+      checkShotLimits: body.checkShotLimits ?? before.checkShotLimits,
       workingWeek: body.workingWeek ?? before.workingWeek,
       weeklyMailHour: body.weeklyMailHour ?? before.weeklyMailHour,
     };

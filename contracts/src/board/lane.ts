@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { againReason } from '../set-up/check-shot.js';
 import { id, instantMs } from '../common.js';
 import { fixState } from '../fixes/fix-state.js';
 import { lostFix } from '../lost-fixes/lost-fix.js';
@@ -45,6 +46,17 @@ export const lane = laneChange.extend({
   crewPhone: z.string().nullable(),
   siteName: z.string().nullable(),
   mountPoint: z.string().nullable(),
+  /** Today's newest set-up card of the rover. */
+  setUp: z.object({ at: instantMs, by: z.string() }).nullable(),
+  /** Its newest check shot of the last days; `again` says why it does not count any more. */
+  checkShot: z
+    .object({
+      at: instantMs,
+      horizontalMm: z.number().int(),
+      passed: z.boolean(),
+      again: againReason.nullable(),
+    })
+    .nullable(),
   /** Times of the last hour that are not on shift because of a pause: drawn hatched. */
   pauses: z.array(z.object({ start: instantMs, end: instantMs })),
 });

@@ -1,3 +1,4 @@
+import { checkShotLimits } from '../set-up/check-shot-limits.js';
 import { z } from 'zod';
 import { shortText } from '../common.js';
 import { shiftPattern } from '../crews/crew.js';
@@ -22,6 +23,7 @@ export const settings = z.object({
   keepPositionsOffShift: z.boolean(),
   limits,
   toleranceProfile,
+  checkShotLimits,
   /** The pattern that a new crew begins with. */
   workingWeek: shiftPattern,
   weeklyMailHour: z.number().int('A whole hour').min(0).max(23),
@@ -31,6 +33,7 @@ export type Settings = z.infer<typeof settings>;
 export const settingsBody = settings.partial({
   limits: true,
   toleranceProfile: true,
+  checkShotLimits: true,
   workingWeek: true,
   weeklyMailHour: true,
 });

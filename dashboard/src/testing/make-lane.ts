@@ -24,6 +24,8 @@ export const makeLane = (change: Partial<Lane> = {}): Lane => ({
   crewPhone: null,
   siteName: 'Tannery Flats',
   mountPoint: 'TANF00',
+  setUp: null,
+  checkShot: null,
   pauses: [],
   ...change,
 });

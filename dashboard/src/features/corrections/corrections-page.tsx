@@ -2,6 +2,7 @@ import { Button } from '@fluentui/react-components';
 import {
   correctionSourceBody,
   type CorrectionSource,
+  type CorrectionSourceBody,
 } from '@hubtack/contracts/corrections/correction-source.js';
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
@@ -17,7 +18,7 @@ import {
   useChangeCorrectionSource,
 } from '../../lib/corrections';
 import { useMe } from '../../lib/session';
-import { typingFaults } from './typing-faults';
+import { typingFaults } from '@hubtack/contracts/corrections/typing-faults.js';
 
 /** What looks mistyped, said while it is typed. It does not stop anybody: some names really are like that. */
 function Fields() {
@@ -53,9 +54,9 @@ function Fields() {
 
 interface SourceSheetProps {
   title: string;
-  source: Omit<CorrectionSource, 'id'>;
+  source: CorrectionSourceBody;
   button: string;
-  save: (body: Omit<CorrectionSource, 'id'>) => Promise<unknown>;
+  save: (body: CorrectionSourceBody) => Promise<unknown>;
   onDone: () => void;
 }
 
@@ -74,7 +75,20 @@ function SourceSheet({ title, source, button, save, onDone }: SourceSheetProps) 
   );
 }
 
-const blank = { name: '', address: '', port: 2101, mountPoint: '', baseLatitude: null, baseLongitude: null };
+const blank: CorrectionSourceBody = {
+  name: '',
+  address: '',
+  port: 2101,
+  mountPoint: '',
+  user: null,
+  ntripVersion: 2,
+  tls: false,
+  sendPosition: false,
+  expectedFormat: 'any',
+  watchMinutes: null,
+  baseLatitude: null,
+  baseLongitude: null,
+};
 
 function AddSource({ onDone }: { onDone: () => void }) {
   const add = useAddCorrectionSource();

@@ -52,6 +52,26 @@ function ToleranceFields() {
   );
 }
 
+/** When a check shot passes, and when another is due. Stored in metres, said in metres: a form does not convert. */
+function CheckShotFields() {
+  return (
+    <fieldset className="limits">
+      <legend>Check shots</legend>
+      <p>
+        What a check on a control point may differ by. The licensed surveyor in charge, and local rules,
+        decide what is acceptable.
+      </p>
+      <NumberField name="checkShotLimits.horizontalM" label="In plan to, m" required />
+      <NumberField name="checkShotLimits.verticalM" label="In height to, m" required />
+      <NumberField
+        name="checkShotLimits.againAfterLostMinutes"
+        label="Check again after a lost fix of, min"
+        required
+      />
+    </fieldset>
+  );
+}
+
 function SettingsForm({ current }: { current: ShownSettings }) {
   const change = useChangeSettings();
   const [isSaved, setIsSaved] = useState(false);
@@ -105,6 +125,7 @@ function SettingsForm({ current }: { current: ShownSettings }) {
         />
         <LimitFields />
         <ToleranceFields />
+        <CheckShotFields />
         <PreviewPart />
         <NumberField
           name="weeklyMailHour"

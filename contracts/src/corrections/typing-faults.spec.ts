@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { typingFaults } from './typing-faults';
+import { typingFaults } from './typing-faults.js';
 
 const good = { address: 'caster.network.example', port: 2101, mountPoint: 'TANF00' };
 const fieldsOf = (change: Partial<typeof good>) =>
