@@ -203,6 +203,56 @@ describe('a mount point that fails', () => {
   });
 });
 
+it('crews that are moved off a mount point that failed end its lost fix, and raise none at the new one', async () => {
+  const source = (mountPoint: string) =>
+    server.database
+      .insert(correctionSources)
+      .values({ name: mountPoint, address: 'localhost', port: 2101, mountPoint })
+      .returning()
+      .get().id;
+  const [old, next] = [source('TANF00'), source('QUARB2')];
+  const move = async (id: number) => {
+    server.database.update(rovers).set({ correctionSourceId: id }).run();
+    await server.makeCrew(`Crew at ${id}`);
+  };
+  const crew = [
+    rover,
+    await server.makeRover(undefined, await server.makeCrew('Alder', { pattern: allDay })),
+  ];
+  await move(old);
+  const stopped = (second: number) => ({ ageSeconds: second - 98 });
+  for (const who of crew) await report(0, 100, 4, () => ({}), who);
+  for (let until = 110; until <= 180; until += 10)
+    for (const who of crew) await report(until - 10, until, 5, stopped, who);
+  const ofMountPoints = async () => (await all()).filter(({ kind }) => kind === 'mountPoint');
+  expect(await ofMountPoints()).toMatchObject([{ mountPoint: 'TANF00', endAt: null }]);
+  await move(next);
+  // The receivers go on with the old stream until somebody has typed in the new one.
+  for (let until = 190; until <= 260; until += 10)
+    for (const who of crew) await report(until - 10, until, 5, stopped, who);
+  expect(await ofMountPoints()).toMatchObject([{ mountPoint: 'TANF00', endAt: expect.any(Number) }]);
+  // The new one fails as well, later: that is raised.
+  for (const who of crew) await report(260, 300, 4, () => ({}), who);
+  const again = (second: number) => ({ ageSeconds: second - 298 });
+  for (let until = 310; until <= 360; until += 10)
+    for (const who of crew) await report(until - 10, until, 5, again, who);
+  expect((await ofMountPoints()).map(({ mountPoint }) => mountPoint).toSorted()).toEqual([
+    'QUARB2',
+    'TANF00',
+  ]);
+});
+
+it('sentences that come late say that there were corrections earlier in the shift', async () => {
+  await report(90, 400, 1, () => ({ ageSeconds: null, stationId: null }));
+  expect((await all())[0]).toMatchObject({ kind: 'noFirstFix', diagnosis: { cause: 'neverCorrected' } });
+  // What the logger had kept of the minute before: float, so there were corrections.
+  let body = '';
+  for (let second = 10; second < 80; second++) body += gga(NINE + second * S, 5);
+  await postSentences(server.url, rover.key, body);
+  await report(400, 420, 1, () => ({ ageSeconds: null, stationId: null }));
+  expect((await all())[0]!.diagnosis!.cause).not.toBe('neverCorrected');
+});
+
 it('a rover that was out of coverage all of yesterday and uploads it in order today: what was raised is withdrawn', async () => {
   const tuesday = NINE - 86_400_000;
   server.clock.set(tuesday - 3 * 3_600_000);

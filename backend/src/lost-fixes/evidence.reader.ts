@@ -68,6 +68,12 @@ export class EvidenceReader {
     };
   }
 
+  /** Sentences from this instant on have come late: they are looked through again. */
+  forgetSince(roverId: number, from: number): void {
+    const known = this.looked.get(roverId);
+    if (known && from < known.until) this.looked.delete(roverId);
+  }
+
   private since(roverId: number, start: number, until: number): EvidenceEpoch[] {
     if (until - start <= FIRST_MS + NEWEST_MS) return this.fixes.epochs(roverId, start, until);
     return [

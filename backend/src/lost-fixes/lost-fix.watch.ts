@@ -16,6 +16,7 @@ import { SettingsService } from '../settings/settings.service.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 import { EpisodeKeeper, type Look } from './episode.keeper.js';
 import { isChattering } from './chattering.js';
+import { EvidenceReader } from './evidence.reader.js';
 import { LostFixRepository } from './lost-fix.repository.js';
 import { LostFixWriter } from './lost-fix.writer.js';
 import { OutageKeeper } from './outage.keeper.js';
@@ -49,6 +50,7 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     private readonly writer: LostFixWriter,
     private readonly episodes: EpisodeKeeper,
     private readonly outages: OutageKeeper,
+    private readonly evidence: EvidenceReader,
   ) {}
 
   onApplicationBootstrap(): void {
@@ -120,6 +122,7 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     for (const entry of this.roster.list(now)) {
       const known = before.get(entry.roverId);
       const rover = known ?? watch(entry, now - LOOKED_BACK_MS);
+      if (rover.entry.mountPoint !== entry.mountPoint) rover.mountPointSince = now;
       rover.entry = entry;
       rover.shifts = null;
       rover.isStale = true;
@@ -146,7 +149,9 @@ export class LostFixWatch implements OnApplicationBootstrap, BeforeApplicationSh
     const rover = this.rovers.get(roverId);
     if (!rover) return;
     rover.isStale = true;
-    if (from !== null) rover.lookedAt = Math.min(rover.lookedAt, from);
+    if (from === null) return;
+    rover.lookedAt = Math.min(rover.lookedAt, from);
+    this.evidence.forgetSince(roverId, from);
   }
 
   private setCrewBack(crewId: number, from: number): void {

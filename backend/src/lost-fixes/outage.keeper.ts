@@ -18,6 +18,7 @@ const SLACK_MS = 60_000;
 
 interface KnownOutage {
   id: number;
+  mountPoint: string;
   start: number;
   end: number | null;
   roverIds: Set<number>;
@@ -50,6 +51,7 @@ export class OutageKeeper {
       const roverIds = this.lostFixes.members(row.id).map(({ roverId }) => roverId!);
       const known = {
         id: row.id,
+        mountPoint: row.mountPoint,
         start: row.startAt,
         end: null,
         reporting: roverIds.length,
@@ -84,7 +86,10 @@ export class OutageKeeper {
       if (mountPoint === null) continue;
       const heldUntil = this.fixes.heldUntil(roverId);
       const isReporting = isWorking(rover, now, heldUntil) && (heldUntil ?? 0) > now;
-      const seen = { roverId, mountPoint, isReporting, lostAt: rover.corrections.lostAt };
+      const { lostAt } = rover.corrections;
+      // Corrections lost before it was moved here were another mount point's.
+      const isOurs = lostAt !== null && lostAt >= rover.mountPointSince;
+      const seen = { roverId, mountPoint, isReporting, lostAt: isOurs ? lostAt : null };
       const list = byMountPoint.get(mountPoint);
       if (list) list.push({ rover, seen });
       else byMountPoint.set(mountPoint, [{ rover, seen }]);
@@ -92,9 +97,12 @@ export class OutageKeeper {
     for (const [mountPoint, list] of byMountPoint) {
       const seen = list.map((one) => one.seen);
       const known = this.outages.get(mountPoint);
-      if (known && known.end === null) this.goOn(known, mountPoint, list, seen, now, limits);
+      if (known && known.end === null) this.goOn(known, list, seen, now, limits);
       else this.begin(mountPoint, list, seen, now, limits);
     }
+    // All its rovers have been moved to another.
+    for (const known of this.outages.values())
+      if (known.end === null && !byMountPoint.has(known.mountPoint)) this.goOn(known, [], [], now, limits);
   }
 
   /** The mount point's lost fix that a loss beginning at this instant hangs under; null when it has another reason. */
@@ -104,21 +112,18 @@ export class OutageKeeper {
 
   evidenceFor(rover: WatchedRover, start: number): Evidence['outage'] {
     const outage = this.outageFor(rover, start);
-    const { mountPoint } = rover.entry;
-    return outage && mountPoint !== null
-      ? {
-          rovers: outage.roverIds.size,
-          reporting: Math.max(outage.reporting, outage.roverIds.size),
-          mountPoint,
-        }
-      : null;
+    if (!outage) return null;
+    const { roverIds, reporting, mountPoint } = outage;
+    return { rovers: roverIds.size, reporting: Math.max(reporting, roverIds.size), mountPoint };
   }
 
   private outageFor({ entry }: WatchedRover, start: number): KnownOutage | null {
-    const known = entry.mountPoint === null ? undefined : this.outages.get(entry.mountPoint);
-    if (!known?.roverIds.has(entry.roverId)) return null;
-    const isWithin = start >= known.start - SLACK_MS && start <= (known.end ?? Infinity) + AFTERMATH_MS;
-    return isWithin ? known : null;
+    // Not by where it is now: it may have been moved since.
+    const holds = (known: KnownOutage) =>
+      known.roverIds.has(entry.roverId) &&
+      start >= known.start - SLACK_MS &&
+      start <= (known.end ?? Infinity) + AFTERMATH_MS;
+    return [...this.outages.values()].find(holds) ?? null;
   }
 
   private begin(
@@ -133,13 +138,14 @@ export class OutageKeeper {
     const roverIds = new Set(outage.roverIds);
     const known: KnownOutage = {
       id: 0,
+      mountPoint,
       start: outage.start,
       end: null,
       roverIds,
       reporting: reportingOf(seen),
       overSince: null,
     };
-    const diagnosis = this.diagnosisOf(known, mountPoint, list, now);
+    const diagnosis = this.diagnosisOf(known, list, now);
     const id = this.writer.raise({
       kind: 'mountPoint',
       mountPoint,
@@ -156,8 +162,7 @@ export class OutageKeeper {
   }
 
   private diagnosisOf(
-    { roverIds, reporting }: KnownOutage,
-    mountPoint: string,
+    { roverIds, reporting, mountPoint }: KnownOutage,
     list: readonly { rover: WatchedRover }[],
     at: number,
   ): Diagnosis {
@@ -172,7 +177,6 @@ export class OutageKeeper {
 
   private goOn(
     outage: KnownOutage,
-    mountPoint: string,
     list: readonly { rover: WatchedRover }[],
     seen: readonly MountPointRover[],
     now: number,
@@ -183,7 +187,7 @@ export class OutageKeeper {
       if (lostAt !== null && lostAt >= outage.start - SLACK_MS) outage.roverIds.add(roverId);
     outage.reporting = Math.max(outage.reporting, reportingOf(seen));
     if (outage.roverIds.size > before)
-      this.writer.change(outage.id, { diagnosis: this.diagnosisOf(outage, mountPoint, list, now) });
+      this.writer.change(outage.id, { diagnosis: this.diagnosisOf(outage, list, now) });
     if (!isOutageOver(seen)) {
       outage.overSince = null;
       return;

@@ -6,6 +6,8 @@ import { noCorrectionsYet, type Corrections } from './corrections-watch.js';
 /** What the watch keeps in memory of a rover; all of it can be read anew. */
 export interface WatchedRover {
   entry: RosterEntry;
+  /** Since when it is on the mount point of its entry, as far as this process has seen it change. */
+  mountPointSince: number;
   /** Shifts that overlap `shiftsWindow`, those of a day without a shift set left out of today; null: to be read. */
   shifts: RoverShift[] | null;
   shiftsWindow: Interval;
@@ -21,6 +23,7 @@ export interface WatchedRover {
 
 export const watch = (entry: RosterEntry, lookedAt: number): WatchedRover => ({
   entry,
+  mountPointSince: 0,
   shifts: null,
   shiftsWindow: { start: 0, end: 0 },
   unsetToday: null,
