@@ -1,5 +1,6 @@
 import { z } from 'zod';
 import { id, instantText, latitude, longitude, shortText } from '../common.js';
+import { checkStatuses, checkStepName } from './check.js';
 import { impossible } from './typing-faults.js';
 
 /** Which observation messages a rover can use: MSM (1071 and up), the legacy ones (1001 to 1012), or either. */
@@ -74,7 +75,9 @@ export const correctionSource = source.extend({
     .object({
       id,
       at: instantText,
+      status: z.enum(checkStatuses),
       passed: z.boolean().nullable().describe('Null while it runs or cancelled'),
+      failedStep: checkStepName.nullable(),
     })
     .nullable(),
   downSince: instantText
