@@ -4,7 +4,7 @@ import { makeLostFix } from '../../testing/make-lost-fix';
 import { fitsFilter, noFilter } from './filter';
 import { withBlocks } from './blocks';
 import { inOrderOfNeed, needOf } from './need';
-import { planScale, scaleBarMetres } from './plan-scale';
+import { planScale, scaleBarMetres } from '../../components/plan-scale';
 
 const NOW = 1_005_000;
 const never = { fixedMs: 0, floatMs: 0, codeMs: 1, noneMs: 0, silentMs: 0 };
