@@ -1,11 +1,13 @@
-import { Field, Input, Select, Textarea, type InputProps } from '@fluentui/react-components';
+import { Checkbox, Field, Input, Select, Textarea, type InputProps } from '@fluentui/react-components';
 import { useState } from 'react';
-import { useController } from 'react-hook-form';
+import { useController, type FieldError } from 'react-hook-form';
 
 interface FieldProps {
   name: string;
   label: string;
   hint?: string | undefined;
+  /** What looks wrong while it is typed; it stops nobody. */
+  doubt?: string | undefined;
   required?: boolean;
 }
 
@@ -27,11 +29,16 @@ type Reader = keyof typeof readers;
 const textOf = (value: unknown): string =>
   value === null || value === undefined ? '' : `${value as string | number | boolean}`;
 
+function stateOf(error: FieldError | undefined, doubt: string | undefined) {
+  if (error) return { validationMessage: error.message ?? 'Not right', validationState: 'error' } as const;
+  if (!doubt) return {};
+  return { validationMessage: { children: doubt, role: 'status' }, validationState: 'warning' } as const;
+}
+
 /** A field of the form around it: what is shown is what was typed, what the form holds is what that stands for. */
-function useFormField(name: string, reader: Reader) {
+function useFormField(name: string, reader: Reader, doubt?: string) {
   const { field, fieldState } = useController({ name });
   const [text, setText] = useState(() => textOf(field.value));
-  const { error } = fieldState;
   return {
     input: {
       name,
@@ -43,9 +50,7 @@ function useFormField(name: string, reader: Reader) {
       },
     },
     ref: field.ref,
-    state: error
-      ? ({ validationMessage: error.message ?? 'Not right', validationState: 'error' } as const)
-      : {},
+    state: stateOf(fieldState.error, doubt),
   };
 }
 
@@ -54,10 +59,11 @@ export function TextField({
   name,
   label,
   hint,
+  doubt,
   required,
   ...props
 }: FieldProps & Omit<InputProps, 'name' | 'value' | 'required'>) {
-  const { input, ref, state } = useFormField(name, required ? 'text' : 'optionalText');
+  const { input, ref, state } = useFormField(name, required ? 'text' : 'optionalText', doubt);
   return (
     <Field label={label} hint={hint} required={required} {...state}>
       <Input {...props} {...input} input={{ ref }} />
@@ -65,8 +71,8 @@ export function TextField({
   );
 }
 
-export function NumberField({ name, label, hint, required }: FieldProps) {
-  const { input, ref, state } = useFormField(name, 'number');
+export function NumberField({ name, label, hint, doubt, required }: FieldProps) {
+  const { input, ref, state } = useFormField(name, 'number', doubt);
   return (
     <Field label={label} hint={hint} required={required} {...state}>
       <Input inputMode="decimal" {...input} input={{ ref }} />
@@ -123,6 +129,23 @@ export function ChoiceField({ hint, required, ...choice }: ChoiceFieldProps) {
   return (
     <Field label={choice.label} hint={hint} required={required} {...state}>
       <ChoiceInput {...choice} />
+    </Field>
+  );
+}
+
+/** Yes or no. */
+export function FlagField({ name, label, hint }: FieldProps) {
+  const { field } = useController({ name });
+  return (
+    <Field hint={hint}>
+      <Checkbox
+        name={name}
+        label={label}
+        checked={field.value === true}
+        onBlur={field.onBlur}
+        onChange={(_, { checked }) => field.onChange(checked === true)}
+        ref={field.ref}
+      />
     </Field>
   );
 }
