@@ -231,6 +231,7 @@ describe('a crew chief reaches the own crew only', () => {
     '/api/rovers/{id}/timeline': () => otherRover,
     '/api/rovers/{id}/epochs': () => otherRover,
     '/api/crews/{id}/day': () => otherCrew,
+    '/api/crews/{id}/visits': () => otherCrew,
     '/api/crews/{id}/shift/{step}': () => otherCrew,
     '/api/lost-fixes/{id}': () => otherLostFix,
     '/api/lost-fixes/{id}/photos': () => otherLostFix,

@@ -5,10 +5,12 @@ import {
   crewDay,
   crewDayQuery,
   shiftStep,
+  siteVisitList,
   shiftStepBody,
   type CrewDayView,
   type ShiftStep,
   type ShiftStepBody,
+  type SiteVisitList,
 } from '@hubtack/contracts/shifts/shift.js';
 import { AllowRoles, CurrentViewer, type Viewer } from '../auth/access.js';
 import { ShiftMarksService } from '../shifts/shift-marks.service.js';
@@ -33,6 +35,17 @@ export class CrewDayController {
     @Query({ schema: crewDayQuery }) query: { date?: string | undefined },
   ): CrewDayView {
     return this.crewDays.day(viewer, id, query.date);
+  }
+
+  @Get('visits')
+  @AllowRoles('dispatcher', 'technician', 'crewChief')
+  @ApiOkResponse({ standardSchema: siteVisitList })
+  visits(
+    @CurrentViewer() viewer: Viewer,
+    @Param('id', { schema: idParam }) id: number,
+    @Query({ schema: crewDayQuery }) query: { date?: string | undefined },
+  ): SiteVisitList {
+    return this.crewDays.visits(viewer, id, query.date);
   }
 
   /** start, pause (with a reason), resume, finish. Sent again with the same Idempotency-Key it counts once. */

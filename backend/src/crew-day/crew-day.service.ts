@@ -1,8 +1,9 @@
 import { Inject, Injectable } from '@nestjs/common';
-import type { CrewDayView } from '@hubtack/contracts/shifts/shift.js';
+import type { CrewDayView, SiteVisitList } from '@hubtack/contracts/shifts/shift.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { roverAssignments, rovers } from '@hubtack/drizzle/schema/rovers.js';
+import { sites } from '@hubtack/drizzle/schema/sites.js';
 import { and, asc, eq, gt, isNull, lt, or } from 'drizzle-orm';
 import { DateTime } from 'luxon';
 import type { Viewer } from '../auth/access.js';
@@ -19,6 +20,7 @@ import { SettingsService } from '../settings/settings.service.js';
 import { dutyAt } from '../shifts/on-shift.js';
 import { ShiftMarksRepository } from '../shifts/shift-marks.repository.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
+import { siteVisits, type PlacedSite } from './site-visits.js';
 
 /** One local day of a crew in one answer: shifts, ribbons, lost fixes. */
 @Injectable()
@@ -40,7 +42,7 @@ export class CrewDayService {
     if (!crew) throw notFound('This crew');
     const zone = this.settings.get().timeZone;
     const now = this.clock.now();
-    const day = localDayOf(date ? DateTime.fromISO(date, { zone }).toMillis() : now, zone);
+    const day = this.dayOf(date, zone);
     const crewDay = this.shifts.crewDay(crewId, day, zone);
     return {
       crewId,
@@ -56,12 +58,44 @@ export class CrewDayService {
     };
   }
 
+  /** In order of time; what lies off shift is not there once the day's positions off shift have been dropped. */
+  visits(viewer: Viewer, crewId: number, date?: string): SiteVisitList {
+    this.check(viewer, crewId);
+    const day = this.dayOf(date, this.settings.get().timeZone);
+    const placed = this.database
+      .select({ name: sites.name, latitude: sites.latitude, longitude: sites.longitude })
+      .from(sites)
+      .all()
+      .filter((site): site is PlacedSite => site.latitude !== null && site.longitude !== null);
+    return this.assignedOn(crewId, day)
+      .flatMap(({ id, label, from, to }) =>
+        siteVisits(this.fixes.places(id, from, to), placed).map((visit) => ({ roverLabel: label, ...visit })),
+      )
+      .toSorted((a, b) => a.start - b.start);
+  }
+
+  private dayOf(date: string | undefined, zone: string): Interval {
+    return localDayOf(date ? DateTime.fromISO(date, { zone }).toMillis() : this.clock.now(), zone);
+  }
+
   /** Any other crew does not exist for a crew chief. */
   check(viewer: Viewer, crewId: number): void {
     if (viewer.role === 'crewChief' && viewer.crewId !== crewId) throw notFound('This crew');
   }
 
   private roversOn(crewId: number, day: Interval): CrewDayView['rovers'] {
+    return this.assignedOn(crewId, day).map(({ id, label, from, to }) => ({
+      id,
+      label,
+      spans: clipSpans(this.fixes.spans(id, from, to), from, to),
+    }));
+  }
+
+  /** Rovers of the crew on a day, and the part of it that they were the crew's. */
+  private assignedOn(
+    crewId: number,
+    day: Interval,
+  ): { id: number; label: string; from: number; to: number }[] {
     return this.database
       .select({
         id: rovers.id,
@@ -80,10 +114,11 @@ export class CrewDayService {
       )
       .orderBy(asc(rovers.label))
       .all()
-      .map(({ id, label, start, end }) => {
-        const from = Math.max(day.start, start);
-        const to = Math.min(day.end, end ?? day.end);
-        return { id, label, spans: clipSpans(this.fixes.spans(id, from, to), from, to) };
-      });
+      .map(({ id, label, start, end }) => ({
+        id,
+        label,
+        from: Math.max(day.start, start),
+        to: Math.min(day.end, end ?? day.end),
+      }));
   }
 }

@@ -1,7 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { epochs, SLOT_MS } from '@hubtack/drizzle/schema/epochs.js';
-import { and, eq, gte, inArray, lt, sql } from 'drizzle-orm';
+import { and, eq, gte, inArray, isNotNull, lt, sql } from 'drizzle-orm';
 import { DATABASE } from '../database/database.module.js';
 import type { Epoch, LateSigmas } from './epoch.js';
 import type { TimedQuality } from './timeline.js';
@@ -85,6 +85,26 @@ export class EpochRepository {
         .orderBy(epochs.slot, epochs.time)
         .all()
         .map(({ slot: _slot, roverId: _roverId, ...epoch }) => epoch),
+    );
+  }
+
+  /** One place of a rover for each slot of [from, to) that has any, in order of time. */
+  places(roverId: number, from: number, to: number): { time: number; latitude: number; longitude: number }[] {
+    return this.bySlots(from, to, (slots) =>
+      this.database
+        .select({
+          // SQLite takes the other columns from the row that has the minimum.
+          time: sql<number>`min(${epochs.time})`,
+          latitude: sql<number>`${epochs.latitude}`,
+          longitude: sql<number>`${epochs.longitude}`,
+        })
+        .from(epochs)
+        .where(
+          and(this.window(roverId, slots, from, to), isNotNull(epochs.latitude), isNotNull(epochs.longitude)),
+        )
+        .groupBy(epochs.slot)
+        .orderBy(epochs.slot)
+        .all(),
     );
   }
 

@@ -64,6 +64,11 @@ export class FixesService {
     return to > from ? this.epochRows.list(roverId, from, to) : [];
   }
 
+  /** Where a rover was, once in each half minute. */
+  places(roverId: number, from: number, to: number): { time: number; latitude: number; longitude: number }[] {
+    return to > from ? this.epochRows.places(roverId, from, to) : [];
+  }
+
   /** Epochs of a window for a chart, every n-th so that there are at most MAX_POINTS. */
   series(roverId: number, from: number, to: number): EpochSeries {
     const epochs = this.epochRows.list(roverId, from, to);

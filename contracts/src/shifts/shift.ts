@@ -84,6 +84,11 @@ export const crewDay = z.object({
   lostFixes: z.array(lostFix),
 });
 export type CrewDayView = z.infer<typeof crewDay>;
+/** Sites that the crew's rovers were at on a day, as far as single positions are still kept. */
+export const siteVisitList = z.array(
+  z.object({ roverLabel: z.string(), siteName: z.string(), start: instantMs, end: instantMs }),
+);
+export type SiteVisitList = z.infer<typeof siteVisitList>;
 export const crewDayQuery = z.object({
   date: z.iso.date().optional().describe('Local day; today when absent'),
 });

@@ -1,6 +1,7 @@
 import {
   crewDay,
   shift,
+  siteVisitList,
   type ShiftBody,
   type ShiftStep,
   type ShiftStepBody,
@@ -23,6 +24,13 @@ export const crewDayOnQuery = (crewId: number, date: string) =>
   queryOptions({
     queryKey: [...crewDayKey, 'on', crewId, date],
     queryFn: () => api(crewDay, 'GET', `/api/crews/${crewId}/day?date=${date}`),
+  });
+
+/** Sites that its rovers were at on that day. */
+export const siteVisitsQuery = (crewId: number, date: string) =>
+  queryOptions({
+    queryKey: [...crewDayKey, 'visits', crewId, date],
+    queryFn: () => api(siteVisitList, 'GET', `/api/crews/${crewId}/visits?date=${date}`),
   });
 
 const touches = [crewDayKey];

@@ -11,7 +11,7 @@ import { crewsQuery } from '../../lib/crews';
 import { clockTime, duration, utc, zoneName } from '../../lib/format';
 import { percent } from '../../lib/percent';
 import { useMe } from '../../lib/session';
-import { crewDayOnQuery } from '../../lib/shifts';
+import { crewDayOnQuery, siteVisitsQuery } from '../../lib/shifts';
 import { DayLostFixes } from './day-lost-fixes';
 import { dayTotals, pausesOf, windowOf, workedOf } from './day-figures';
 import './crew-day.css';
@@ -54,12 +54,12 @@ export default function CrewDayPage() {
       </header>
       {error && !data && <Failed error={error} retry={() => void refetch()} />}
       {!data && !error && <Loading what="the day" />}
-      {data && <Day day={data} />}
+      {data && <Day day={data} date={date} />}
     </div>
   );
 }
 
-function Day({ day }: { day: CrewDayView }) {
+function Day({ day, date }: { day: CrewDayView; date: string }) {
   const now = useServerNow();
   const { timeZone } = useMe();
   const site = useQuery(crewsQuery).data?.find(({ id }) => id === day.crewId)?.siteName;
@@ -77,6 +77,7 @@ function Day({ day }: { day: CrewDayView }) {
       {day.rovers.map((rover) => (
         <RoverDay key={rover.id} day={day} rover={rover} now={now} zone={timeZone} />
       ))}
+      <SitesVisited crewId={day.crewId} date={date} zone={timeZone} />
       <Marks day={day} zone={timeZone} />
       <DayLostFixes lostFixes={day.lostFixes} zone={timeZone} now={now} />
     </>
@@ -124,6 +125,30 @@ function RoverDay({ day, rover, now, zone }: RoverDayProps) {
           zone={zone}
         />
       )}
+    </section>
+  );
+}
+
+function SitesVisited({ crewId, date, zone }: { crewId: number; date: string; zone: string }) {
+  const { data, error, refetch } = useQuery(siteVisitsQuery(crewId, date));
+  return (
+    <section aria-label="Sites visited">
+      <h2>Sites visited</h2>
+      {error && !data && <Failed error={error} retry={() => void refetch()} />}
+      {data?.length === 0 && (
+        <p>
+          No rover of the crew was within a kilometre of a site for five minutes, or the positions of that day
+          are no longer kept.
+        </p>
+      )}
+      <ul className="day-marks">
+        {data?.map(({ roverLabel, siteName, start, end }) => (
+          <li key={`${roverLabel} ${start}`}>
+            <time title={utc(start)}>{clockTime(start, zone)}</time> to{' '}
+            <time title={utc(end)}>{clockTime(end, zone)}</time> {siteName} <small>{roverLabel}</small>
+          </li>
+        ))}
+      </ul>
     </section>
   );
 }
