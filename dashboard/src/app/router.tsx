@@ -44,6 +44,7 @@ export const router = createBrowserRouter([
       { path: '/rovers', element: page(() => import('../features/rovers/rovers-page')) },
       { path: '/rovers/:id', element: page(() => import('../features/rovers/rover-page')) },
       { path: '/corrections', element: page(() => import('../features/corrections/corrections-page')) },
+      { path: '/corrections/:id', element: page(() => import('../features/corrections/source-page')) },
       {
         path: '/sentence-reader',
         element: page(() => import('../features/sentence-reader/sentence-reader-page')),

@@ -1,121 +1,36 @@
 import { Button } from '@fluentui/react-components';
-import {
-  correctionSourceBody,
-  type CorrectionSource,
-  type CorrectionSourceBody,
-} from '@hubtack/contracts/corrections/correction-source.js';
+import type { CorrectionSource } from '@hubtack/contracts/corrections/correction-source.js';
 import { useQuery } from '@tanstack/react-query';
 import { useState } from 'react';
-import { useFormContext } from 'react-hook-form';
+import { Link } from 'react-router-dom';
 import { DataTable } from '../../components/data-table';
-import { NumberField, TextField } from '../../components/form-fields';
-import { FormSheet } from '../../components/form-sheet';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
-import {
-  correctionSourcesQuery,
-  useAddCorrectionSource,
-  useChangeCorrectionSource,
-} from '../../lib/corrections';
+import { correctionSourcesQuery } from '../../lib/corrections';
+import { dayAndTime } from '../../lib/format';
 import { useMe } from '../../lib/session';
-import { typingFaults } from '@hubtack/contracts/corrections/typing-faults.js';
+import { asSentence, sourceVerdict } from './check-words';
+import { OutcomeMark } from './outcome-mark';
+import { AddSource } from './source-sheets';
+import { watchWords } from './watch-words';
+import './corrections.css';
 
-/** What looks mistyped, said while it is typed. It does not stop anybody: some names really are like that. */
-function Fields() {
-  const { watch } = useFormContext();
-  const [address, port, mountPoint] = watch(['address', 'port', 'mountPoint']) as (string | number | null)[];
-  const faults = typingFaults({ address: `${address ?? ''}`, port, mountPoint: `${mountPoint ?? ''}` });
-  const hint = (field: string) =>
-    faults
-      .filter((fault) => fault.field === field)
-      .map(({ words }) => `Look again: it ${words}.`)
-      .join(' ') || undefined;
-  return (
-    <>
-      <TextField name="name" label="Name" required />
-      <div className="form-row">
-        <TextField name="address" label="Address" hint={hint('address')} autoComplete="off" required />
-        <NumberField name="port" label="Port" hint={hint('port')?.replace('it 2101', '2101')} required />
-      </div>
-      <TextField
-        name="mountPoint"
-        label="Mount point"
-        hint={hint('mountPoint')}
-        autoComplete="off"
-        required
-      />
-      <div className="form-row">
-        <NumberField name="baseLatitude" label="Base latitude" hint="Empty when not known" />
-        <NumberField name="baseLongitude" label="Base longitude" hint="Empty for a virtual base" />
-      </div>
-    </>
-  );
+function LastCheck({ source }: { source: CorrectionSource }) {
+  const { timeZone } = useMe();
+  const timeOf = (instant: string) => dayAndTime(Date.parse(instant), timeZone);
+  return <OutcomeMark {...asSentence(sourceVerdict(source, timeOf))} />;
 }
 
-interface SourceSheetProps {
-  title: string;
-  source: CorrectionSourceBody;
-  button: string;
-  save: (body: CorrectionSourceBody) => Promise<unknown>;
-  onDone: () => void;
-}
-
-function SourceSheet({ title, source, button, save, onDone }: SourceSheetProps) {
-  return (
-    <FormSheet
-      title={title}
-      schema={correctionSourceBody}
-      defaults={source}
-      button={button}
-      save={save}
-      onDone={onDone}
-    >
-      <Fields />
-    </FormSheet>
-  );
-}
-
-const blank: CorrectionSourceBody = {
-  name: '',
-  address: '',
-  port: 2101,
-  mountPoint: '',
-  user: null,
-  ntripVersion: 2,
-  tls: false,
-  sendPosition: false,
-  expectedFormat: 'any',
-  watchMinutes: null,
-  baseLatitude: null,
-  baseLongitude: null,
+const baseWords = ({ decodedBase, baseLatitude }: CorrectionSource): string => {
+  if (decodedBase) return `station ${decodedBase.stationId}, read from the stream`;
+  return baseLatitude === null ? 'not known' : 'written by hand';
 };
-
-function AddSource({ onDone }: { onDone: () => void }) {
-  const add = useAddCorrectionSource();
-  const save = add.mutateAsync;
-  return (
-    <SourceSheet title="Add a correction source" source={blank} button="Add it" save={save} onDone={onDone} />
-  );
-}
-
-function ChangeSource({ source, onDone }: { source: CorrectionSource; onDone: () => void }) {
-  const change = useChangeCorrectionSource(source.id);
-  const { id: _id, ...body } = source;
-  const title = `Change ${source.name}`;
-  return <SourceSheet title={title} source={body} button="Save" save={change.mutateAsync} onDone={onDone} />;
-}
-
-const placeWords = ({ baseLatitude, baseLongitude }: CorrectionSource) =>
-  baseLatitude === null || baseLongitude === null
-    ? 'not known'
-    : `${baseLatitude.toFixed(4)}, ${baseLongitude.toFixed(4)}`;
 
 export default function CorrectionsPage() {
   const query = useQuery(correctionSourcesQuery);
   const { role } = useMe();
-  const [open, setOpen] = useState<CorrectionSource | 'new' | null>(null);
+  const [isAdding, setIsAdding] = useState(false);
   const mayChange = role === 'technician' || role === 'manager';
-  const close = () => setOpen(null);
   return (
     <ListPage
       title="Correction sources"
@@ -123,7 +38,7 @@ export default function CorrectionsPage() {
       query={query}
       action={
         mayChange && (
-          <Button appearance="primary" onClick={() => setOpen('new')}>
+          <Button appearance="primary" onClick={() => setIsAdding(true)}>
             Add a source
           </Button>
         )
@@ -133,8 +48,8 @@ export default function CorrectionsPage() {
         <>
           {sources.length === 0 ? (
             <Empty title="No correction source yet">
-              Add the base stations and networks that your rovers use, so that the board can name them and say
-              how far they are.
+              Add the base stations and networks that your rovers use, and check them before a crew stands in
+              the field without a fix.
             </Empty>
           ) : (
             <DataTable
@@ -142,29 +57,27 @@ export default function CorrectionsPage() {
               rows={sources}
               rowKey={({ id }) => id}
               columns={[
-                { name: 'Source', cell: (source) => <strong>{source.name}</strong> },
-                { name: 'Mount point', cell: (source) => source.mountPoint },
-                { name: 'Address', cell: (source) => source.address },
-                { name: 'Port', figure: true, cell: (source) => source.port },
-                { name: 'Base position', cell: placeWords },
                 {
-                  name: 'Change',
-                  cell: (source) =>
-                    mayChange && (
-                      <Button
-                        size="small"
-                        onClick={() => setOpen(source)}
-                        aria-label={`Change ${source.name}`}
-                      >
-                        Change
-                      </Button>
-                    ),
+                  name: 'Source',
+                  cell: ({ id, name }) => (
+                    <Link to={`/corrections/${id}`} className="check-link">
+                      <strong>{name}</strong>
+                    </Link>
+                  ),
                 },
+                { name: 'Mount point', cell: ({ mountPoint }) => mountPoint },
+                { name: 'Address', cell: ({ address, port }) => `${address}:${port}` },
+                { name: 'Last check', cell: (source) => <LastCheck source={source} /> },
+                { name: 'Watch', cell: ({ watchMinutes }) => watchWords(watchMinutes) },
+                { name: 'Base', cell: baseWords },
               ]}
             />
           )}
-          {open === 'new' && <AddSource onDone={close} />}
-          {open !== null && open !== 'new' && <ChangeSource source={open} onDone={close} />}
+          <p className="caution">
+            A check proves that a stream comes and can be read. It does not prove a position: check into known
+            control before and during work.
+          </p>
+          {isAdding && <AddSource onDone={() => setIsAdding(false)} />}
         </>
       )}
     </ListPage>

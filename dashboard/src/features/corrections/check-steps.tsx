@@ -1,0 +1,45 @@
+import { checkStepLabels, type CheckStep } from '@hubtack/contracts/corrections/check.js';
+import type { ReactNode } from 'react';
+import { markOf, markWords } from './check-words';
+import { OutcomeMark } from './outcome-mark';
+
+const tookWords = (ms: number): string => (ms < 1000 ? `${ms} ms` : `${(ms / 1000).toFixed(1)} s`);
+
+interface CheckStepsProps {
+  steps: readonly CheckStep[];
+  /** Said under the step that looked for the mount point. */
+  mountPointHelp: ReactNode;
+}
+
+/** The walk from a name to a base position, each step with what was seen and what to try. */
+export function CheckSteps({ steps, mountPointHelp }: CheckStepsProps) {
+  return (
+    <ol className="check-steps" aria-label="Steps of the check">
+      {steps.map((one) => (
+        <li
+          key={one.step}
+          data-outcome={one.outcome}
+          aria-current={one.outcome === 'running' ? 'step' : undefined}
+        >
+          <div className="check-step-head">
+            <strong>{checkStepLabels[one.step]}</strong>
+            <OutcomeMark mark={markOf(one)} words={markWords[markOf(one)]} />
+            {one.durationMs !== null && <small>{tookWords(one.durationMs)}</small>}
+          </div>
+          {one.seen && <p>{one.seen}</p>}
+          {one.toTry && (
+            <p className="check-try">
+              <strong>To try:</strong> {one.toTry}
+            </p>
+          )}
+          {one.warnings.map((warning) => (
+            <p key={warning} className="check-warning">
+              {warning}
+            </p>
+          ))}
+          {one.step === 'mountPoint' && mountPointHelp}
+        </li>
+      ))}
+    </ol>
+  );
+}

@@ -1,0 +1,88 @@
+import { Button } from '@fluentui/react-components';
+import type { CorrectionCheck } from '@hubtack/contracts/corrections/check.js';
+import type { CorrectionSource } from '@hubtack/contracts/corrections/correction-source.js';
+import { Failed, Loading } from '../../components/query-states';
+import { useCancelCheck, useCorrectionCheck } from '../../lib/corrections';
+import { dayAndTime, duration, utc } from '../../lib/format';
+import { useMe } from '../../lib/session';
+import { BaseFigures } from './base-figures';
+import { CheckSteps } from './check-steps';
+import { announcement, asSentence, verdictOf } from './check-words';
+import { OutcomeMark } from './outcome-mark';
+import { StreamFigures } from './stream-figures';
+import { Suggestions } from './suggestions';
+
+interface CheckViewProps {
+  source: CorrectionSource;
+  checkId: number;
+  mayChange: boolean;
+  checkAgain: () => void;
+}
+
+/** One check, as it goes or as it went. */
+export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewProps) {
+  const { data: check, error, refetch } = useCorrectionCheck(source.id, checkId);
+  if (!check)
+    return error ? <Failed error={error} retry={() => void refetch()} /> : <Loading what="the check" />;
+  return (
+    <div className="check">
+      <CheckHead source={source} check={check} mayChange={mayChange} />
+      {error && <p role="status">What is shown may be old: {error.message} The check itself goes on.</p>}
+      <p className="visually-hidden" aria-live="polite">
+        {announcement(check)}
+      </p>
+      <div className="check-columns">
+        <CheckSteps
+          steps={check.steps}
+          mountPointHelp={
+            <Suggestions source={source} check={check} mayChange={mayChange} checkAgain={checkAgain} />
+          }
+        />
+        <div>
+          {check.base && <BaseFigures base={check.base} place={check.place} />}
+          {check.stream && <StreamFigures stream={check.stream} />}
+        </div>
+      </div>
+      {check.passed && (
+        <p className="caution">
+          A check proves the stream, not the position. Check into known control before and during work; the
+          licensed surveyor in charge and the rules of the place decide what is acceptable.
+        </p>
+      )}
+    </div>
+  );
+}
+
+function CheckHead({
+  source,
+  check,
+  mayChange,
+}: {
+  source: CorrectionSource;
+  check: CorrectionCheck;
+  mayChange: boolean;
+}) {
+  const { timeZone } = useMe();
+  const cancel = useCancelCheck(source.id, check.id);
+  const startedAt = Date.parse(check.startedAt);
+  const { mark, words } = asSentence(verdictOf(check));
+  return (
+    <div className="check-head">
+      <OutcomeMark mark={mark} words={words} />
+      <span className="check-when">
+        <time dateTime={check.startedAt} title={utc(startedAt)}>
+          {dayAndTime(startedAt, timeZone)}
+        </time>
+        {check.endedAt !== null && `, took ${duration(Date.parse(check.endedAt) - startedAt)}`}
+        {check.place !== null && `, for ${check.place}`}
+        {check.by === null ? ', by the timetable' : `, by ${check.by}`}
+      </span>
+      {check.status === 'running' && mayChange && (
+        <Button disabled={cancel.isPending} onClick={() => cancel.mutate()}>
+          Cancel the check
+        </Button>
+      )}
+      {cancel.error && <span role="alert">{cancel.error.message}</span>}
+    </div>
+  );
+}
