@@ -46,6 +46,10 @@ export const router = createBrowserRouter([
       { path: '/corrections', element: page(() => import('../features/corrections/corrections-page')) },
       { path: '/corrections/:id', element: page(() => import('../features/corrections/source-page')) },
       {
+        path: '/corrections/:id/mount-points',
+        element: page(() => import('../features/corrections/mount-points-page')),
+      },
+      {
         path: '/sentence-reader',
         element: page(() => import('../features/sentence-reader/sentence-reader-page')),
       },

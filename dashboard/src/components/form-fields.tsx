@@ -135,16 +135,18 @@ export function ChoiceField({ hint, required, ...choice }: ChoiceFieldProps) {
 
 /** Yes or no. */
 export function FlagField({ name, label, hint }: FieldProps) {
-  const { field } = useController({ name });
+  const {
+    field: { value, onBlur, onChange, ref },
+  } = useController({ name });
   return (
     <Field hint={hint}>
       <Checkbox
         name={name}
         label={label}
-        checked={field.value === true}
-        onBlur={field.onBlur}
-        onChange={(_, { checked }) => field.onChange(checked === true)}
-        ref={field.ref}
+        checked={value === true}
+        onBlur={onBlur}
+        onChange={(_, { checked }) => onChange(checked === true)}
+        ref={ref}
       />
     </Field>
   );

@@ -61,7 +61,8 @@ export function announcement(check: Ended & Pick<CorrectionCheck, 'steps'>): str
   const ended = check.steps.findLast(({ outcome }) => outcome === 'pass' || outcome === 'fail');
   const step = ended ? `${checkStepLabels[ended.step]}: ${markWords[markOf(ended)].toLowerCase()}.` : '';
   if (check.status === 'running') return step;
-  return `${step} The check ${verdictOf(check).words}.`.trim();
+  const end = check.status === 'cancelled' ? 'was cancelled' : verdictOf(check).words;
+  return `${step} The check ${end}.`.trim();
 }
 
 const sentence = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
