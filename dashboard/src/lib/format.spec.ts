@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { clockTimeSeconds, distance, duration, hours, zoneName } from './format';
+import { clockTimeSeconds, distance, duration, hours, whenWords, zoneName } from './format';
 
 describe('times and lengths as people read them', () => {
   it.each([
@@ -18,6 +18,13 @@ describe('times and lengths as people read them', () => {
     expect(zoneName(summer, 'Australia/Hobart')).toBe('AEDT');
     expect(zoneName(Date.parse('2026-07-01T00:00:00Z'), 'Australia/Hobart')).toBe('AEST');
     expect(zoneName(summer, 'America/Denver')).toBe('MST');
+  });
+  it('a time of the same day has no date, by the days of the firm', () => {
+    const now = Date.parse('2026-12-01T22:41:07Z');
+    expect(whenWords(Date.parse('2026-12-01T13:00:00Z'), now, 'Australia/Hobart')).toBe('at 00:00');
+    expect(whenWords(Date.parse('2026-12-01T12:59:00Z'), now, 'Australia/Hobart')).toBe(
+      'on 1 Dec 2026, 23:59',
+    );
   });
   it('distances in the firm\u2019s units', () => {
     expect([distance(640, 'metric'), distance(8400, 'metric')]).toEqual(['640 m', '8.4 km']);

@@ -27,6 +27,12 @@ export const dayAndTime = (at: number, zone: string): string =>
     hourCycle: 'h23',
   }).format(at);
 
+/** Within a sentence: at 09:12 on the same day, else on 1 Dec 2026, 09:12. */
+export function whenWords(at: number, now: number, zone: string): string {
+  const day = format(zone, { day: 'numeric', month: 'short', year: 'numeric' });
+  return day.format(at) === day.format(now) ? `at ${clockTime(at, zone)}` : `on ${dayAndTime(at, zone)}`;
+}
+
 /** Short name of the zone at an instant, such as AEDT. */
 export function zoneName(at: number, zone: string): string {
   // en-AU knows the Australian abbreviations, en-US the American ones; en-GB would say GMT+11.

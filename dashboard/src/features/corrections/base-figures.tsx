@@ -3,26 +3,32 @@ import { distance } from '../../lib/format';
 import { useMe } from '../../lib/session';
 import { baseAlarms, degrees, fineLength, precision } from './base-words';
 
+/** A base that is another one, or stands elsewhere, before anything else about the check. */
+export function BaseAlarms({ base }: { base: CheckedBase }) {
+  const { units } = useMe();
+  const alarms = baseAlarms(base, units);
+  if (alarms.length === 0) return null;
+  return (
+    <div className="base-alarm" role="alert">
+      {alarms.map((alarm) => (
+        <p key={alarm}>
+          <strong>{alarm}</strong>
+        </p>
+      ))}
+      <p>
+        Every point taken from it moves along. Ask the operator, and check into known control before anything
+        is measured.
+      </p>
+    </div>
+  );
+}
+
 /** Where the base is by its own message, how far from the work, and what can be expected at that distance. */
 export function BaseFigures({ base, place }: { base: CheckedBase; place: string | null }) {
   const { units } = useMe();
-  const alarms = baseAlarms(base, units);
   return (
     <section className="check-part" aria-label="The base">
       <h3>The base</h3>
-      {alarms.length > 0 && (
-        <div className="base-alarm" role="alert">
-          {alarms.map((alarm) => (
-            <p key={alarm}>
-              <strong>{alarm}</strong>
-            </p>
-          ))}
-          <p>
-            Every point taken from it moves along. Ask the operator, and check into known control before
-            anything is measured.
-          </p>
-        </div>
-      )}
       <dl className="facts">
         <div>
           <dt>Station</dt>

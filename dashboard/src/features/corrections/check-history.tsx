@@ -26,20 +26,22 @@ export function CheckHistory({ checks, shownId, linkTo }: CheckHistoryProps) {
           {
             name: 'When',
             cell: ({ id, startedAt }) => (
-              <Link
-                to={linkTo(id)}
-                className="check-link"
-                title={utc(Date.parse(startedAt))}
-                aria-current={id === shownId ? 'true' : undefined}
-              >
-                {dayAndTime(Date.parse(startedAt), timeZone)}
-              </Link>
+              <>
+                <Link
+                  to={linkTo(id)}
+                  className="check-link"
+                  title={utc(Date.parse(startedAt))}
+                  aria-current={id === shownId ? 'true' : undefined}
+                >
+                  {dayAndTime(Date.parse(startedAt), timeZone)}
+                </Link>
+                {id === shownId && <small> shown above</small>}
+              </>
             ),
           },
           { name: 'Result', cell: (check) => <OutcomeMark {...asSentence(verdictOf(check))} /> },
           { name: 'For', cell: ({ place }) => place ?? '–' },
           { name: 'By', cell: ({ by }) => by ?? 'the timetable' },
-          { name: 'Above', cell: ({ id }) => (id === shownId ? 'shown' : '') },
         ]}
       />
     </section>

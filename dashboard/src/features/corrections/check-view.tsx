@@ -5,7 +5,7 @@ import { Failed, Loading } from '../../components/query-states';
 import { useCancelCheck, useCorrectionCheck } from '../../lib/corrections';
 import { dayAndTime, duration, utc } from '../../lib/format';
 import { useMe } from '../../lib/session';
-import { BaseFigures } from './base-figures';
+import { BaseAlarms, BaseFigures } from './base-figures';
 import { CheckSteps } from './check-steps';
 import { announcement, asSentence, verdictOf } from './check-words';
 import { OutcomeMark } from './outcome-mark';
@@ -31,7 +31,8 @@ export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewP
       <p className="visually-hidden" aria-live="polite">
         {announcement(check)}
       </p>
-      <div className="check-columns">
+      {check.base && <BaseAlarms base={check.base} />}
+      <div className="check-columns" data-alone={!check.base && !check.stream}>
         <CheckSteps
           steps={check.steps}
           mountPointHelp={

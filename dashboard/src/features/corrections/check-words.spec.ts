@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import { announcement, markOf, sourceVerdict, verdictOf } from './check-words';
 
 const at = '2026-12-01T22:12:00Z';
-const timeOf = () => '09:12';
+const timeOf = () => 'at 09:12';
 const last = (change: object) => ({
   downSince: null,
   lastCheck: { id: 1, at, status: 'done' as const, passed: true, failedStep: null, ...change },
@@ -13,7 +13,7 @@ describe('what is said of a source', () => {
   it.each([
     [{ downSince: null, lastCheck: null }, 'never checked'],
     [last({}), 'passed at 09:12'],
-    [last({ passed: false, failedStep: 'mountPoint' }), 'failed at “Mount point there”, 09:12'],
+    [last({ passed: false, failedStep: 'mountPoint' }), 'failed at “Mount point there” at 09:12'],
     [last({ status: 'cancelled', passed: null }), 'cancelled at 09:12'],
     [last({ status: 'running', passed: null }), 'being checked now'],
     [

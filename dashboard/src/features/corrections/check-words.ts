@@ -39,7 +39,7 @@ export function verdictOf({ status, passed, failedStep }: Ended): Verdict {
   return passed ? { mark: 'pass', words: 'passed' } : { mark: 'fail', words: failedWords(failedStep) };
 }
 
-/** What is known of a source, in a line; `timeOf` writes an instant in the firm's time. */
+/** What is known of a source, in a line; `timeOf` writes an instant in the firm's time, with "at" or "on". */
 export function sourceVerdict(
   { lastCheck, downSince }: Pick<CorrectionSource, 'lastCheck' | 'downSince'>,
   timeOf: (instant: string) => string,
@@ -48,12 +48,11 @@ export function sourceVerdict(
   if (downSince !== null) {
     const step = lastCheck?.failedStep;
     const where = step ? `, ${failedWords(step)}` : '';
-    return { mark: 'fail', words: `down since ${timeOf(downSince)}${where}` };
+    return { mark: 'fail', words: `down since ${timeOf(downSince).replace(/^(at|on) /, '')}${where}` };
   }
   if (lastCheck === null) return { mark: 'waiting', words: 'never checked' };
   const { mark, words } = verdictOf(lastCheck);
-  const time = timeOf(lastCheck.at);
-  return { mark, words: mark === 'fail' ? `${words}, ${time}` : `${words} at ${time}` };
+  return { mark, words: `${words} ${timeOf(lastCheck.at)}` };
 }
 
 /** What is said aloud while a check goes on: the step that ended last, then how it all ended. */

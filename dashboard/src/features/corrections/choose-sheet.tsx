@@ -2,6 +2,7 @@ import { Button, Checkbox, MessageBar, MessageBarBody } from '@fluentui/react-co
 import type { CorrectionSource } from '@hubtack/contracts/corrections/correction-source.js';
 import type { MountPoint } from '@hubtack/contracts/corrections/mount-point.js';
 import { useState } from 'react';
+import '../../components/form.css';
 import { Sheet } from '../../components/sheet';
 import { useChangeCorrectionSource } from '../../lib/corrections';
 import { changesFor, doubtsAbout } from './choose';

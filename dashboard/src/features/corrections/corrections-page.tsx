@@ -7,8 +7,9 @@ import { DataTable } from '../../components/data-table';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
 import { correctionSourcesQuery } from '../../lib/corrections';
-import { dayAndTime } from '../../lib/format';
+import { whenWords } from '../../lib/format';
 import { useMe } from '../../lib/session';
+import { useServerNow } from '../../live/use-lanes';
 import { asSentence, sourceVerdict } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 import { AddSource } from './source-sheets';
@@ -17,7 +18,8 @@ import './corrections.css';
 
 function LastCheck({ source }: { source: CorrectionSource }) {
   const { timeZone } = useMe();
-  const timeOf = (instant: string) => dayAndTime(Date.parse(instant), timeZone);
+  const now = useServerNow();
+  const timeOf = (instant: string) => whenWords(Date.parse(instant), now, timeZone);
   return <OutcomeMark {...asSentence(sourceVerdict(source, timeOf))} />;
 }
 

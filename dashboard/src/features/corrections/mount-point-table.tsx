@@ -85,7 +85,7 @@ const Row = memo(function Row({ mountPoint: one, index, isCurrent, onChoose }: R
       </span>
       <span role="cell">
         {one.format ?? '–'}
-        <small>{one.formatDetails}</small>
+        <small>{one.formatDetails?.replaceAll(',', ', ')}</small>
       </span>
       <span role="cell">{one.constellations?.replaceAll('+', ' + ') ?? '–'}</span>
       <span role="cell" className="mount-point-figure">

@@ -1,9 +1,10 @@
 import { expect, it } from 'vitest';
 import { labelsThatFit, longitudeNear } from './plan-labels';
 
-it('writes the first of two labels that would lie on one another, and both when they do not', () => {
+it('writes no label over another point or over a label that is there', () => {
   const at = (x: number, y: number) => ({ x, y, text: 'TANF00' });
-  expect([...labelsThatFit([at(0, 0), at(10, 5), at(10, 40), at(200, 5)])]).toEqual([0, 2, 3]);
+  expect([...labelsThatFit([at(0, 0), at(10, 14), at(10, 40), at(200, 5)])]).toEqual([1, 2, 3]);
+  expect([...labelsThatFit([at(0, 0), at(-40, 5), at(200, 5)])]).toEqual([0, 2]);
 });
 
 it.each([

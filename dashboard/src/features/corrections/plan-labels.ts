@@ -6,15 +6,18 @@ export interface Label {
 
 const CHARACTER = 8.2;
 const LINE = 16;
+const POINT = 6;
 
-/** Which labels can be written without lying on one that came before, by index; the first always can. */
+/** Which labels, by index, can be written without lying on another point or on a label that came before. */
 export function labelsThatFit(labels: readonly Label[]): Set<number> {
   const fit = new Set<number>();
-  const boxes: { left: number; right: number; top: number }[] = [];
+  // A label may not hide a point either, but begins at its own.
+  const boxes = labels.map(({ x, y }) => ({ left: x - POINT, right: x + POINT, top: y }));
   labels.forEach(({ x, y, text }, index) => {
     const box = { left: x, right: x + text.length * CHARACTER, top: y };
     const isFree = boxes.every(
-      ({ left, right, top }) => box.right < left || box.left > right || Math.abs(box.top - top) >= LINE,
+      ({ left, right, top }, other) =>
+        other === index || box.right < left || box.left > right || Math.abs(box.top - top) >= LINE,
     );
     if (!isFree) return;
     fit.add(index);

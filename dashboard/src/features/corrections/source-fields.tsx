@@ -33,7 +33,10 @@ const doubtsOf = (typed: Typed) => {
   return (field: LoginField): string | undefined =>
     faults
       .filter((fault) => fault.field === field)
-      .map(({ words }) => (field === 'port' ? `${words}.` : `Look again: it ${words}.`))
+      .map(({ words }, index) => {
+        const sentence = field === 'port' ? words : `${index === 0 ? 'Look again: it' : 'It'} ${words}`;
+        return sentence.endsWith('?') ? sentence : `${sentence}.`;
+      })
       .join(' ') || undefined;
 };
 
@@ -97,11 +100,11 @@ export function SourceFields({ source }: { source: CorrectionSource | null }) {
           <PasswordField isKept={isKept} isMoved={isMoved} doubt={doubt('password')} />
         </div>
         {password !== '' && !typed.user && (
-          <p className="source-note">A password alone is no login: write the user too.</p>
+          <p className="source-caution">A password alone is no login: write the user too.</p>
         )}
         <FlagField name="tls" label="Encrypt the connection (TLS)" />
         {hasLogin && !typed.tls && (
-          <p className="source-note" role="status">
+          <p className="source-caution" role="status">
             Without TLS the login travels in the clear: anybody on the way can read it. Ask the operator for
             an encrypted port, and use this password for nothing else.
           </p>

@@ -1,5 +1,4 @@
 import type { CheckedStream } from '@hubtack/contracts/corrections/check.js';
-import { DataTable } from '../../components/data-table';
 
 const grouped = new Intl.NumberFormat('en-GB');
 const seconds = (value: number): string => `${value.toFixed(value < 10 ? 1 : 0)} s`;
@@ -38,21 +37,26 @@ export function StreamFigures({ stream }: { stream: CheckedStream }) {
         </div>
       </dl>
       {stream.messages.length > 0 && (
-        <DataTable
-          label="Messages in the stream"
-          rows={stream.messages}
-          rowKey={({ number }) => number}
-          columns={[
-            { name: 'Message', cell: ({ number }) => <strong>{number}</strong> },
-            { name: 'What it is', cell: ({ name }) => name },
-            { name: 'Count', figure: true, cell: ({ count }) => count },
-            {
-              name: 'Every',
-              figure: true,
-              cell: ({ intervalSeconds }) => (intervalSeconds === null ? '–' : seconds(intervalSeconds)),
-            },
-          ]}
-        />
+        <table className="message-table" aria-label="Messages in the stream">
+          <thead>
+            <tr>
+              <th scope="col">Message</th>
+              <th scope="col">What it is</th>
+              <th scope="col">Count</th>
+              <th scope="col">Every</th>
+            </tr>
+          </thead>
+          <tbody>
+            {stream.messages.map(({ number, name, count, intervalSeconds }) => (
+              <tr key={number}>
+                <th scope="row">{number}</th>
+                <td>{name}</td>
+                <td>{count}</td>
+                <td>{intervalSeconds === null ? '–' : seconds(intervalSeconds)}</td>
+              </tr>
+            ))}
+          </tbody>
+        </table>
       )}
     </section>
   );
