@@ -1,0 +1,26 @@
+import { assert, double, property } from 'fast-check';
+import { expect, it } from 'vitest';
+import { ecefOf, geodeticOf } from './ecef.js';
+
+it('there and back is the same place to a hundredth of a millimetre, at the poles as well', () => {
+  const latitude = double({ min: -90, max: 90, noNaN: true });
+  const longitude = double({ min: -179.999, max: 180, noNaN: true });
+  const heightM = double({ min: -12_000, max: 30_000, noNaN: true });
+  assert(
+    property(latitude, longitude, heightM, (phi, lambda, h) => {
+      const there = ecefOf({ latitude: phi, longitude: lambda, heightM: h });
+      const back = ecefOf(geodeticOf(there));
+      expect(Math.hypot(back.x - there.x, back.y - there.y, back.z - there.z)).toBeLessThan(1e-5);
+      expect(geodeticOf(there).heightM).toBeCloseTo(h, 5);
+    }),
+    {
+      numRuns: 1000,
+      examples: [
+        [90, 0, 0],
+        [-90, 12, 100],
+        [0, 180, -10],
+        [89.9999999, 45, 5],
+      ],
+    },
+  );
+});
