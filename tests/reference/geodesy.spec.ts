@@ -33,7 +33,7 @@ describe('geodetic and earth-centred coordinates', () => {
         double({ min: -179.9, max: 179.9, noNaN: true }),
         double({ min: -500, max: 9000, noNaN: true }),
         (latitude, longitude, heightM) => {
-          const [x, y, z] = geocentric.forward([longitude, latitude, heightM]) as [number, number, number];
+          const [x, y, z] = geocentric.forward<[number, number, number]>([longitude, latitude, heightM]);
           const ours = ecefOf({ latitude, longitude, heightM });
           expect(Math.hypot(ours.x - x, ours.y - y, ours.z - z)).toBeLessThan(1e-4);
         },
