@@ -26,7 +26,7 @@ export function CheckHistory({ checks, shownId, linkTo }: CheckHistoryProps) {
           {
             name: 'When',
             cell: ({ id, startedAt }) => (
-              <>
+              <span>
                 <Link
                   to={linkTo(id)}
                   className="check-link"
@@ -36,7 +36,7 @@ export function CheckHistory({ checks, shownId, linkTo }: CheckHistoryProps) {
                   {dayAndTime(Date.parse(startedAt), timeZone)}
                 </Link>
                 {id === shownId && <small> shown above</small>}
-              </>
+              </span>
             ),
           },
           { name: 'Result', cell: (check) => <OutcomeMark {...asSentence(verdictOf(check))} /> },

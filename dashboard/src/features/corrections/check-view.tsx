@@ -32,7 +32,7 @@ export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewP
         {announcement(check)}
       </p>
       {check.base && <BaseAlarms base={check.base} />}
-      <div className="check-columns" data-alone={!check.base && !check.stream}>
+      <div className="check-columns" data-alone={check.status !== 'running' && !check.base && !check.stream}>
         <CheckSteps
           steps={check.steps}
           mountPointHelp={
