@@ -126,7 +126,7 @@ function PlanPoint({ mountPoint: one, x, y, isNamed, isCurrent, words, onChoose 
             tabIndex: 0,
             'aria-label': `Choose ${name}`,
             onClick: () => onChoose(one),
-            onKeyDown: (event) => event.key === 'Enter' && onChoose(one),
+            onKeyDown: (event) => (event.key === 'Enter' || event.key === ' ') && onChoose(one),
             style: { cursor: 'pointer' },
           }
         : { role: 'img', 'aria-label': name })}

@@ -160,7 +160,9 @@ function Changed({ source }: { source: CorrectionSource }) {
     });
   return (
     <MessageBar intent="success" layout="multiline">
-      <MessageBarBody>The mount point of this source is {source.mountPoint} now.</MessageBarBody>
+      <MessageBarBody>
+        The mount point of this source is {source.mountPoint} now. Set the rovers on it to the same.
+      </MessageBarBody>
       <MessageBarActions>
         <Button appearance="primary" disabled={start.isPending} onClick={check}>
           Check it

@@ -2,8 +2,11 @@ import {
   correctionFormatLabels,
   type CorrectionSource,
 } from '@hubtack/contracts/corrections/correction-source.js';
-import type { ReactNode } from 'react';
+import { useQuery } from '@tanstack/react-query';
+import { Fragment, type ReactNode } from 'react';
+import { Link } from 'react-router-dom';
 import { dayAndTime, utc } from '../../lib/format';
+import { roversQuery } from '../../lib/rovers';
 import { useMe } from '../../lib/session';
 import { degrees, fineLength } from './base-words';
 import { watchWords } from './watch-words';
@@ -40,8 +43,24 @@ export function SourceFacts({ source }: { source: CorrectionSource }) {
       <Fact name="Base position">
         <BasePosition source={source} />
       </Fact>
+      <Fact name="Rovers on it">
+        <RoversOn source={source} />
+      </Fact>
     </dl>
   );
+}
+
+/** Whom a change here concerns: each of them is set to the same by hand. */
+function RoversOn({ source }: { source: CorrectionSource }) {
+  const { data: rovers = [] } = useQuery(roversQuery);
+  const mine = rovers.filter((rover) => rover.correctionSourceId === source.id && !rover.retired);
+  if (mine.length === 0) return <>none</>;
+  return mine.map(({ id, label }, index) => (
+    <Fragment key={id}>
+      {index > 0 && ', '}
+      <Link to={`/rovers/${id}`}>{label}</Link>
+    </Fragment>
+  ));
 }
 
 function BasePosition({

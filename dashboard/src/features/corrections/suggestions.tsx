@@ -44,7 +44,9 @@ export function Suggestions({ source, check, mayChange, checkAgain }: Suggestion
       )}
       {taken !== null && (
         <MessageBar intent="success" layout="multiline">
-          <MessageBarBody>The mount point of this source is {taken} now.</MessageBarBody>
+          <MessageBarBody>
+            The mount point of this source is {taken} now. Set the rovers on it to the same.
+          </MessageBarBody>
           <MessageBarActions>
             <Button appearance="primary" onClick={checkAgain}>
               Check again
