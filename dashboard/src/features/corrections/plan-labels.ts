@@ -4,7 +4,8 @@ export interface Label {
   text: string;
 }
 
-const CHARACTER = 8.2;
+const BESIDE = 10;
+const CHARACTER = 9;
 const LINE = 16;
 const POINT = 6;
 
@@ -14,7 +15,7 @@ export function labelsThatFit(labels: readonly Label[]): Set<number> {
   // A label may not hide a point either, but begins at its own.
   const boxes = labels.map(({ x, y }) => ({ left: x - POINT, right: x + POINT, top: y }));
   labels.forEach(({ x, y, text }, index) => {
-    const box = { left: x, right: x + text.length * CHARACTER, top: y };
+    const box = { left: x, right: x + BESIDE + text.length * CHARACTER, top: y };
     const isFree = boxes.every(
       ({ left, right, top }, other) =>
         other === index || box.right < left || box.left > right || Math.abs(box.top - top) >= LINE,
