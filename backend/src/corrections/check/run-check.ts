@@ -157,13 +157,14 @@ class Walk {
   }
 
   private connect(to: Resolved): Promise<Socket> {
-    const { address, port } = this.target;
+    const { address, port, tls } = this.target;
+    const where = `${address} does not answer at port ${port}`;
     return this.within(
       this.limits.connectMs,
       (signal) => openConnection(this.target, to, signal),
       () =>
         new NtripProblem(
-          `${address} does not answer at port ${port}.`,
+          tls ? `${where}, or does not speak TLS there.` : `${where}.`,
           'Check address and port: 2101 is usual. A firewall may be in the way.',
         ),
     );
@@ -255,6 +256,7 @@ class Walk {
     const { sendPosition, place } = this.target;
     if (!sendPosition || !place) return null;
     return writeGga({
+      talker: 'GP',
       time: Date.now(),
       ...place,
       quality: 1,

@@ -3,13 +3,14 @@ import { distance } from 'fastest-levenshtein';
 /** Characters that are read for one another, as the one that stands for both. */
 const LOOKS: Record<string, string> = { O: '0', I: '1', L: '1', S: '5', B: '8', Z: '2', _: '-' };
 const look = (name: string): string =>
-  [...name.toUpperCase()].map((character) => LOOKS[character] ?? character).join('');
+  name.toUpperCase().replaceAll(/./gu, (character) => LOOKS[character] ?? character);
 
 /** Two neighbours changed places: one slip of the finger, though two edits. */
 function isTransposed(a: string, b: string): boolean {
   if (a.length !== b.length) return false;
-  const at = [...a].findIndex((character, index) => character !== b[index]);
-  return at >= 0 && a[at] === b[at + 1] && a[at + 1] === b[at] && a.slice(at + 2) === b.slice(at + 2);
+  let at = 0;
+  while (at < a.length && a[at] === b[at]) at++;
+  return at < a.length && a[at] === b[at + 1] && a[at + 1] === b[at] && a.slice(at + 2) === b.slice(at + 2);
 }
 
 /** How far one name is from another, in slips; capitals and look-alikes count for less than one. */
