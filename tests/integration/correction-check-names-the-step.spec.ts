@@ -75,7 +75,7 @@ describe('a source that is well', () => {
     };
     await checkSource({ port: caster.port }, onReport);
     expect(seen[0]).toBe('rwwwwwwww');
-    expect(seen).toContain('pppppr' + 'www');
+    expect(seen).toContain('ppppprwww');
     expect(seen.at(-1)).toBe('ppppppppp');
   });
   it('may be a caster of version 1 that is asked in version 2, with a blank line after ICY or without', async () => {
