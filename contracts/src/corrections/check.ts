@@ -68,6 +68,9 @@ export const checkedStream = z.object({
 });
 export type CheckedStream = z.infer<typeof checkedStream>;
 
+/** More than this is another place: base positions are stated to tenths of a millimetre and do not wander. */
+export const BASE_MOVED_M = 0.02;
+
 export const checkedBase = z.object({
   stationId: z.number().int(),
   latitude,

@@ -20,7 +20,7 @@ const base = (change: Partial<CheckedBase> = {}): CheckedBase => ({
 describe('a base that is not where it was', () => {
   it('says nothing of one that stands still', () => {
     expect(baseAlarms(base(), 'metric')).toEqual([]);
-    expect(baseAlarms(base({ movedM: 0.004 }), 'metric')).toEqual([]);
+    expect(baseAlarms(base({ movedM: 0.019 }), 'metric')).toEqual([]);
   });
   it('says how far it moved, in the units of the firm', () => {
     expect(baseAlarms(base({ movedM: 1.2345 }), 'metric')).toEqual([expect.stringContaining('1.234 m')]);

@@ -1,10 +1,7 @@
 import type { Me } from '@hubtack/contracts/auth/sign-in.js';
-import type { CheckedBase } from '@hubtack/contracts/corrections/check.js';
+import { BASE_MOVED_M, type CheckedBase } from '@hubtack/contracts/corrections/check.js';
 
 const FEET_A_METRE = 1 / 0.3048;
-/** A fixed base says the same coordinates to 0.1 mm every time; a centimetre is a move and no rounding. */
-const MOVED_M = 0.01;
-
 /** A height or a shift in the firm's units, to the millimetre or a thousandth of a foot. */
 export const fineLength = (metres: number, units: Me['units']): string =>
   units === 'feet' ? `${(metres * FEET_A_METRE).toFixed(3)} ft` : `${metres.toFixed(3)} m`;
@@ -24,7 +21,7 @@ export function baseAlarms(base: CheckedBase, units: Me['units']): string[] {
     alarms.push(
       `Another base: station ${base.stationId}, where the check before read ${base.stationBefore}.`,
     );
-  if (base.movedM !== null && base.movedM >= MOVED_M)
+  if (base.movedM !== null && base.movedM > BASE_MOVED_M)
     alarms.push(`The base stands ${fineLength(base.movedM, units)} from where the check before read it.`);
   return base.isVirtual ? [] : alarms;
 }

@@ -3,7 +3,7 @@ import { Link } from 'react-router-dom';
 import { DataTable } from '../../components/data-table';
 import { dayAndTime, utc } from '../../lib/format';
 import { useMe } from '../../lib/session';
-import { asSentence, verdictOf } from './check-words';
+import { capitalised, verdictOf } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 
 interface CheckHistoryProps {
@@ -39,7 +39,7 @@ export function CheckHistory({ checks, shownId, linkTo }: CheckHistoryProps) {
               </span>
             ),
           },
-          { name: 'Result', cell: (check) => <OutcomeMark {...asSentence(verdictOf(check))} /> },
+          { name: 'Result', cell: (check) => <OutcomeMark {...capitalised(verdictOf(check))} /> },
           { name: 'For', cell: ({ place }) => place ?? '–' },
           { name: 'By', cell: ({ by }) => by ?? 'the timetable' },
         ]}

@@ -1,21 +1,25 @@
 import { checkStepLabels, type CheckStep } from '@hubtack/contracts/corrections/check.js';
 import type { ReactNode } from 'react';
-import { markOf, markWords } from './check-words';
+import { asSentence, markOf, markWords } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 
 const tookWords = (ms: number): string => (ms < 1000 ? `${ms} ms` : `${(ms / 1000).toFixed(1)} s`);
 
+/** Steps that were skipped for the same reason say it once. */
+const isNews = ({ seen, outcome }: CheckStep, before: CheckStep | undefined): boolean =>
+  seen !== '' && !(outcome === 'skipped' && before?.seen === seen);
+
 interface CheckStepsProps {
   steps: readonly CheckStep[];
-  /** Said under the step that looked for the mount point. */
-  mountPointHelp: ReactNode;
+  /** Said under the step that failed. */
+  help: ReactNode;
 }
 
 /** The walk from a name to a base position, each step with what was seen and what to try. */
-export function CheckSteps({ steps, mountPointHelp }: CheckStepsProps) {
+export function CheckSteps({ steps, help }: CheckStepsProps) {
   return (
     <ol className="check-steps" aria-label="Steps of the check">
-      {steps.map((one) => (
+      {steps.map((one, index) => (
         <li
           key={one.step}
           data-outcome={one.outcome}
@@ -26,7 +30,7 @@ export function CheckSteps({ steps, mountPointHelp }: CheckStepsProps) {
             <OutcomeMark mark={markOf(one)} words={markWords[markOf(one)]} />
             {one.durationMs !== null && <small>{tookWords(one.durationMs)}</small>}
           </div>
-          {one.seen && <p>{one.seen}</p>}
+          {isNews(one, steps[index - 1]) && <p>{one.seen}</p>}
           {one.toTry && (
             <p className="check-try">
               <strong>To try:</strong> {one.toTry}
@@ -34,10 +38,10 @@ export function CheckSteps({ steps, mountPointHelp }: CheckStepsProps) {
           )}
           {one.warnings.map((warning) => (
             <p key={warning} className="check-warning">
-              {warning}
+              {asSentence(warning)}
             </p>
           ))}
-          {one.step === 'mountPoint' && mountPointHelp}
+          {one.outcome === 'fail' && help}
         </li>
       ))}
     </ol>

@@ -7,7 +7,7 @@ import { dayAndTime, duration, utc } from '../../lib/format';
 import { useMe } from '../../lib/session';
 import { BaseAlarms, BaseFigures } from './base-figures';
 import { CheckSteps } from './check-steps';
-import { announcement, asSentence, verdictOf } from './check-words';
+import { announcement, capitalised, verdictOf } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 import { StreamFigures } from './stream-figures';
 import { Suggestions } from './suggestions';
@@ -35,9 +35,7 @@ export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewP
       <div className="check-columns" data-alone={check.status !== 'running' && !check.base && !check.stream}>
         <CheckSteps
           steps={check.steps}
-          mountPointHelp={
-            <Suggestions source={source} check={check} mayChange={mayChange} checkAgain={checkAgain} />
-          }
+          help={<Suggestions source={source} check={check} mayChange={mayChange} checkAgain={checkAgain} />}
         />
         <div>
           {check.base && <BaseFigures base={check.base} place={check.place} />}
@@ -66,7 +64,7 @@ function CheckHead({
   const { timeZone } = useMe();
   const cancel = useCancelCheck(source.id, check.id);
   const startedAt = Date.parse(check.startedAt);
-  const { mark, words } = asSentence(verdictOf(check));
+  const { mark, words } = capitalised(verdictOf(check));
   return (
     <div className="check-head">
       <OutcomeMark mark={mark} words={words} />

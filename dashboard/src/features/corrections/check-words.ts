@@ -64,5 +64,6 @@ export function announcement(check: Ended & Pick<CorrectionCheck, 'steps'>): str
   return `${step} The check ${end}.`.trim();
 }
 
-const sentence = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
-export const asSentence = ({ mark, words }: Verdict): Verdict => ({ mark, words: sentence(words) });
+const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
+export const capitalised = ({ mark, words }: Verdict): Verdict => ({ mark, words: capital(words) });
+export const asSentence = (words: string): string => capital(words).replace(/([^.?!])$/, '$1.');

@@ -10,7 +10,7 @@ import { correctionSourcesQuery } from '../../lib/corrections';
 import { whenWords } from '../../lib/format';
 import { useMe } from '../../lib/session';
 import { useServerNow } from '../../live/use-lanes';
-import { asSentence, sourceVerdict } from './check-words';
+import { capitalised, sourceVerdict } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 import { AddSource } from './source-sheets';
 import { watchWords } from './watch-words';
@@ -20,7 +20,7 @@ function LastCheck({ source }: { source: CorrectionSource }) {
   const { timeZone } = useMe();
   const now = useServerNow();
   const timeOf = (instant: string) => whenWords(Date.parse(instant), now, timeZone);
-  return <OutcomeMark {...asSentence(sourceVerdict(source, timeOf))} />;
+  return <OutcomeMark {...capitalised(sourceVerdict(source, timeOf))} />;
 }
 
 const baseWords = ({ decodedBase, baseLatitude }: CorrectionSource): string => {
