@@ -1,6 +1,8 @@
 import { join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { z } from 'zod';
+import { startCaster } from '../caster/caster.js';
+import { demoMountPoints } from '../caster/demo-mount-points.js';
 import { startMailbox } from '../mailbox/mailbox.js';
 import { Processes, freePort, waitUntilReady } from './processes.js';
 
@@ -13,13 +15,17 @@ if (!wanted.success) {
 }
 const port = await freePort(wanted.data);
 const tcpPort = await freePort(10_110);
+const usualCasterPort = 2101;
+const casterPort = await freePort(usualCasterPort);
 const url = `http://127.0.0.1:${port}`;
 
 const processes = new Processes();
 const mailbox = await startMailbox({ pagePort: await freePort(1080), folder: join(folder, 'mailbox') });
+const caster = await startCaster({ mountPoints: demoMountPoints(), port: casterPort });
 const stop = async (status: number) => {
   await processes.stop();
   await mailbox.close();
+  await caster.close();
   process.exit(status);
 };
 for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP'] as const) process.once(signal, () => void stop(0));
@@ -39,6 +45,7 @@ async function start(): Promise<void> {
       SMTP_URL: mailbox.smtpUrl,
       MAIL_FROM: 'Pennywort Surveys <hubtack@pennywort.example>',
       CASTER_PRIVATE_ADDRESSES: 'allow',
+      DEMO_CASTER_PORT: String(casterPort),
       LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
     },
   );
@@ -56,6 +63,11 @@ try {
 }
 
 const accounts = ['manager', 'dispatcher', 'technician', 'chief.alder', 'chief.banksia', 'chief.dogwood'];
+// The sources keep the port that they were made with, so a demo begun at another one does not find this caster.
+const casterNote =
+  casterPort === usualCasterPort
+    ? ''
+    : ` (port ${usualCasterPort} was taken; a demo begun earlier looks there)`;
 console.log(`
 Hubtack runs with the demo firm Pennywort Surveys${port === wanted.data ? '' : ` (port ${wanted.data} was taken)`}:
 
@@ -65,7 +77,7 @@ Sign in as one of
 ${accounts.map((name) => `  ${name}@pennywort.example`).join('\n')}
 with the password  tack-in-the-hub
 
-Mails: ${mailbox.pageUrl}    Sentences over TCP: port ${tcpPort}
+Mails: ${mailbox.pageUrl}    Sentences over TCP: port ${tcpPort}    Caster: localhost:${casterPort}${casterNote}
 Within a minute Banksia's corrections stop, Dogwood goes under trees, Echidna falls silent; Fernwren never had a fix.
 Ctrl-C stops everything. The demo's data is in var/demo; delete that folder to begin anew.
 `);
