@@ -21,6 +21,8 @@ export const environmentSchema = z.object({
   RAW_EPOCH_DAYS: z.coerce.number().int().min(1).max(100_000).default(14),
   METRICS_TOKEN: z.string().min(16, 'at least 16 characters').optional(),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).default('info'),
+  /** Where the demo's own caster listens; read when the demo firm is made. */
+  DEMO_CASTER_PORT: port.default(2101),
   TILE_URL: z.url().optional(),
   DEMO: z
     .enum(['off', 'on'])

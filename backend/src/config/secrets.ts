@@ -19,9 +19,14 @@ function keptSecret(folder: string, name: string): string {
 
 export interface Secrets {
   sessionSecret: string;
+  /** What passwords of correction sources are sealed with. */
+  secretsKey: string;
 }
 
 export function loadSecrets(environment: Environment): Secrets {
   const folder = dirname(environment.DATABASE_FILE);
-  return { sessionSecret: environment.SESSION_SECRET ?? keptSecret(folder, 'session-secret') };
+  return {
+    sessionSecret: environment.SESSION_SECRET ?? keptSecret(folder, 'session-secret'),
+    secretsKey: environment.SECRETS_KEY ?? keptSecret(folder, 'secrets-key'),
+  };
 }

@@ -23,6 +23,13 @@ export class CorrectionSourcesController {
     return this.sources.list();
   }
 
+  @Get(':id')
+  @AllowRoles('dispatcher', 'technician')
+  @ApiOkResponse({ standardSchema: correctionSource })
+  get(@Param('id', { schema: idParam }) id: number): CorrectionSource {
+    return this.sources.get(id);
+  }
+
   @Post()
   @AllowRoles('technician')
   @ApiCreatedResponse({ standardSchema: correctionSource })

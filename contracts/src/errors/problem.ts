@@ -19,6 +19,8 @@ export const problemCodes = [
   'tooLarge',
   'unsupportedMediaType',
   'tooManyRequests',
+  'casterProblem',
+  'needsConfirmation',
   'storageBusy',
   'storageFull',
   'stopping',
