@@ -11,7 +11,7 @@ import {
   type CorrectionSourceBody,
 } from '@hubtack/contracts/corrections/correction-source.js';
 import { mountPointList } from '@hubtack/contracts/corrections/mount-point.js';
-import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
+import { keepPreviousData, queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query';
 import { useEffect } from 'react';
 import { api, apiVoid } from './api';
 import { roversQuery } from './rovers';
@@ -53,6 +53,8 @@ export const mountPointsQuery = (source: CorrectionSource, place: StartCheckBody
   queryOptions({
     queryKey: ['mountPoints', source.id, source.address, source.port, place],
     staleTime: Infinity,
+    // Another place changes the distances only: the list stays while they are on their way.
+    placeholderData: keepPreviousData,
     retry: false,
     refetchOnReconnect: false,
     queryFn: () =>

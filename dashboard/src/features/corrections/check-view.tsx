@@ -16,17 +16,18 @@ interface CheckViewProps {
   source: CorrectionSource;
   checkId: number;
   mayChange: boolean;
+  mayCheck: boolean;
   checkAgain: () => void;
 }
 
 /** One check, as it goes or as it went. */
-export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewProps) {
+export function CheckView({ source, checkId, mayChange, mayCheck, checkAgain }: CheckViewProps) {
   const { data: check, error, refetch } = useCorrectionCheck(source.id, checkId);
   if (!check)
     return error ? <Failed error={error} retry={() => void refetch()} /> : <Loading what="the check" />;
   return (
     <div className="check">
-      <CheckHead source={source} check={check} mayChange={mayChange} />
+      <CheckHead source={source} check={check} mayCheck={mayCheck} />
       {error && <p role="status">What is shown may be old: {error.message} The check itself goes on.</p>}
       <p className="visually-hidden" aria-live="polite">
         {announcement(check)}
@@ -55,11 +56,11 @@ export function CheckView({ source, checkId, mayChange, checkAgain }: CheckViewP
 function CheckHead({
   source,
   check,
-  mayChange,
+  mayCheck,
 }: {
   source: CorrectionSource;
   check: CorrectionCheck;
-  mayChange: boolean;
+  mayCheck: boolean;
 }) {
   const { timeZone } = useMe();
   const cancel = useCancelCheck(source.id, check.id);
@@ -76,7 +77,7 @@ function CheckHead({
         {check.place !== null && `, for ${check.place}`}
         {check.by === null ? ', by the timetable' : `, by ${check.by}`}
       </span>
-      {check.status === 'running' && mayChange && (
+      {check.status === 'running' && mayCheck && (
         <Button disabled={cancel.isPending} onClick={() => cancel.mutate()}>
           Cancel the check
         </Button>

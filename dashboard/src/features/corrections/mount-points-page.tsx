@@ -49,7 +49,11 @@ function MountPoints({ source }: { source: CorrectionSource }) {
               read {clockTimeSeconds(Date.parse(data.readAt), timeZone)}
             </span>
           )}
-          <Button disabled={isFetching} onClick={() => void refetch()}>
+          <Button
+            disabled={isFetching}
+            title="The caster is asked at most once a minute"
+            onClick={() => void refetch()}
+          >
             Read it again
           </Button>
         </div>

@@ -23,6 +23,7 @@ export default function SourcePage() {
   const { search } = usePlaceChoice();
   const [isChanging, setIsChanging] = useState(false);
   const mayChange = role === 'technician' || role === 'manager';
+  const mayCheck = mayChange || role === 'dispatcher';
   if (!source)
     return error ? <Failed error={error} retry={() => void refetch()} /> : <Loading what="the source" />;
   return (
@@ -42,7 +43,7 @@ export default function SourcePage() {
       {error && <p role="status">This may be old: {error.message}</p>}
       <Down source={source} />
       <SourceFacts source={source} />
-      <Checks key={id} source={source} mayChange={mayChange} />
+      <Checks key={id} source={source} mayChange={mayChange} mayCheck={mayCheck} />
       {isChanging && <ChangeSource source={source} onDone={() => setIsChanging(false)} />}
     </>
   );
@@ -61,7 +62,13 @@ function Down({ source: { downSince } }: { source: CorrectionSource }) {
   );
 }
 
-function Checks({ source, mayChange }: { source: CorrectionSource; mayChange: boolean }) {
+interface ChecksProps {
+  source: CorrectionSource;
+  mayChange: boolean;
+  mayCheck: boolean;
+}
+
+function Checks({ source, mayChange, mayCheck }: ChecksProps) {
   const { data, error, refetch } = useQuery(correctionChecksQuery(source.id));
   const [search, setSearch] = useSearchParams();
   const place = usePlaceChoice();
@@ -85,7 +92,7 @@ function Checks({ source, mayChange }: { source: CorrectionSource; mayChange: bo
     <>
       <section className="page-section" aria-label="Check">
         <h2>Check</h2>
-        {mayChange && (
+        {mayCheck && (
           <div className="check-start">
             <PlaceField label="For the work at" choice={place.choice} choose={place.choose} />
             <Button appearance="primary" disabled={running !== undefined || start.isPending} onClick={check}>
@@ -116,6 +123,7 @@ function Checks({ source, mayChange }: { source: CorrectionSource; mayChange: bo
             source={source}
             checkId={shownId}
             mayChange={mayChange}
+            mayCheck={mayCheck}
             checkAgain={check}
           />
         )}
