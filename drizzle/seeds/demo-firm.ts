@@ -2,6 +2,7 @@ import { DateTime } from 'luxon';
 import { xoroshiro128plus } from 'pure-rand/generator/xoroshiro128plus';
 import { uniformInt } from 'pure-rand/distribution/uniformInt';
 import type { RandomGenerator } from 'pure-rand/types/RandomGenerator';
+import { eq } from 'drizzle-orm';
 import type { HubtackDatabase } from '../database.js';
 import { correctionSources } from '../schema/correction-sources.js';
 import { crews } from '../schema/crews.js';
@@ -13,7 +14,7 @@ import { spans } from '../schema/spans.js';
 import { subscriptions } from '../schema/subscriptions.js';
 import { toleranceSpans } from '../schema/tolerance-spans.js';
 import { users } from '../schema/users.js';
-import { DEMO_MAIL_DOMAIN } from './demo-accounts.js';
+import { DEMO_CASTER_PASSWORD, DEMO_CASTER_USER, DEMO_MAIL_DOMAIN } from './demo-accounts.js';
 import {
   demoCrews,
   demoFirm,
@@ -35,6 +36,10 @@ export interface DemoSeed {
   /** The instant the demo starts, ms UTC. */
   now: number;
   passwordHash: string;
+  /** Port of the demo's own caster. */
+  casterPort: number;
+  /** Seals the password of a correction source, by its id. */
+  sealPassword: (sourceId: number, password: string) => string;
   /** The product's own timeline: the past is what it makes of generated epochs, not invented totals. */
   toSpans: (epochs: readonly TimedQuality[]) => DemoSpan[];
 }
@@ -59,8 +64,19 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
     );
     const sourceIds = new Map(
       demoSources.map((source) => {
-        const row = { ...source, address: 'localhost', port: 2101 };
-        return [source.mountPoint, tx.insert(correctionSources).values(row).returning().get().id] as const;
+        const row = {
+          ...source,
+          address: 'localhost',
+          port: seed.casterPort,
+          user: DEMO_CASTER_USER,
+          sendPosition: source.mountPoint === 'TASNET',
+        };
+        const { id } = tx.insert(correctionSources).values(row).returning().get();
+        tx.update(correctionSources)
+          .set({ sealedPassword: seed.sealPassword(id, DEMO_CASTER_PASSWORD) })
+          .where(eq(correctionSources.id, id))
+          .run();
+        return [source.mountPoint, id] as const;
       }),
     );
     const createdAt = seed.now - WEEKS * 7 * 86_400_000;

@@ -30,6 +30,7 @@ const lost = (since: (second: number) => Partial<EvidenceEpoch>, more: Partial<E
   correctedAt: START - 600 * S,
   baseDistanceM: 8400,
   outage: null,
+  sourceDown: null,
   ...more,
 });
 const verdict = (evidence: Evidence) => diagnose(evidence, defaultLimits);
@@ -56,6 +57,20 @@ describe('the likely cause', () => {
       evidence: ['age of corrections rose to 90 s (limit 10 s) while the rover went on reporting'],
       runnerUp: null,
     });
+  });
+  it('mount point down: checks of it say so, while its corrections have stopped', () => {
+    const stopped = (sourceDown: Evidence['sourceDown']) =>
+      lost((second) => ({ ...float, ageMs: (31 + second) * S }), { sourceDown });
+    expect(verdict(stopped({ since: START - 180 * S, mountPoint: 'TANF00' }))).toMatchObject({
+      cause: 'mountPointDown',
+      evidence: ['checks of TANF00 find it down for 4 min', 'age up to 90 s'],
+      runnerUp: 'correctionsStopped',
+    });
+    // Good corrections come from somewhere, whatever the checks say.
+    const { cause } = verdict(
+      lost(() => float, { sourceDown: { since: START - 180 * S, mountPoint: 'TANF00' } }),
+    );
+    expect(cause).toBe('notResolving');
   });
   it('corrections stopped: also when the receiver gives up and no longer says their age', () => {
     const gaveUp = lost(() => ({ quality: 1, ageMs: null, stationId: null }));

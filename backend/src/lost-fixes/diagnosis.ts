@@ -20,6 +20,8 @@ export interface Evidence {
   baseDistanceM: number | null;
   /** The mount point has failed for everyone on it: how many rovers of how many. */
   outage: { rovers: number; reporting: number; mountPoint: string } | null;
+  /** Checks of the correction source find it down, since this instant. */
+  sourceDown: { since: number; mountPoint: string } | null;
 }
 
 export interface Verdict {
@@ -71,13 +73,20 @@ const skyIsBlocked: Rule = (_evidence, figures, limits) => {
 
 /** One rule for each cause, in the order of `causes`: what is further up the chain wins. Null: does not hold. */
 const rules: Record<Cause, Rule> = {
-  mountPointDown: ({ outage }, figures) =>
-    outage && figures.areCorrectionsLost
-      ? [
-          `${outage.rovers} of ${outage.reporting} rovers on ${outage.mountPoint} lost their corrections together`,
-          ...(figures.oldestAgeMs === null ? [] : [`age up to ${seconds(figures.oldestAgeMs)}`]),
-        ]
-      : null,
+  mountPointDown: ({ outage, sourceDown, now }, figures) => {
+    if (!(outage ?? sourceDown) || !figures.areCorrectionsLost) return null;
+    const found: string[] = [];
+    if (outage)
+      found.push(
+        `${outage.rovers} of ${outage.reporting} rovers on ${outage.mountPoint} lost their corrections together`,
+      );
+    if (sourceDown)
+      found.push(
+        `checks of ${sourceDown.mountPoint} find it down for ${Math.max(1, Math.round((now - sourceDown.since) / 60_000))} min`,
+      );
+    if (figures.oldestAgeMs !== null) found.push(`age up to ${seconds(figures.oldestAgeMs)}`);
+    return found;
+  },
   wentQuiet: ({ kind, now }, { beganSilent, silentSinceMs, lastEpochAt }) => {
     if (kind === 'notHeard' || lastEpochAt === null) return null;
     if (!beganSilent && silentSinceMs === null) return null;

@@ -3,6 +3,7 @@ import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import { baseDistance } from '../common/base-distance.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
+import type { RosterEntry } from '../rovers/roster.repository.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { Episode } from './detector.js';
 import type { Evidence, EvidenceEpoch } from './diagnosis.js';
@@ -12,10 +13,7 @@ const BEFORE_MS = 120_000;
 const FIRST_MS = 5 * 60_000;
 const NEWEST_MS = 10 * 60_000;
 
-interface Base {
-  baseLatitude: number | null;
-  baseLongitude: number | null;
-}
+type Source = Pick<RosterEntry, 'baseLatitude' | 'baseLongitude' | 'sourceDownSince' | 'mountPoint'>;
 
 /** Gathers what is known about a loss from the stored epochs. */
 @Injectable()
@@ -37,7 +35,7 @@ export class EvidenceReader {
     episode: Pick<Episode, 'kind' | 'start' | 'end'>,
     shiftStart: number,
     now: number,
-    base: Base,
+    source: Source,
     outage: Evidence['outage'],
   ): Evidence {
     const { kind, start, end } = episode;
@@ -53,6 +51,7 @@ export class EvidenceReader {
         correctedAt: null,
         baseDistanceM: null,
         outage,
+        sourceDown: null,
       };
     const before =
       kind === 'notHeard' ? [] : this.fixes.epochs(roverId, Math.max(start - BEFORE_MS, shiftStart), start);
@@ -63,8 +62,9 @@ export class EvidenceReader {
       before,
       since: this.since(roverId, start, until),
       correctedAt: this.correctedAt(roverId, shiftStart, until),
-      baseDistanceM: this.distance(roverId, base),
+      baseDistanceM: this.distance(roverId, source),
       outage,
+      sourceDown: sourceDownAt(source, until),
     };
   }
 
@@ -95,10 +95,15 @@ export class EvidenceReader {
     return at;
   }
 
-  private distance(roverId: number, { baseLatitude, baseLongitude }: Base): number | null {
+  private distance(roverId: number, { baseLatitude, baseLongitude }: Source): number | null {
     const latest = this.fixes.latest(roverId);
     if (latest?.latitude == null || latest.longitude === null) return null;
     if (baseLatitude === null || baseLongitude === null) return null;
     return baseDistance(latest.latitude, latest.longitude, baseLatitude, baseLongitude);
   }
+}
+
+function sourceDownAt({ sourceDownSince, mountPoint }: Source, at: number): Evidence['sourceDown'] {
+  if (sourceDownSince === null || mountPoint === null || sourceDownSince > at) return null;
+  return { since: sourceDownSince, mountPoint };
 }

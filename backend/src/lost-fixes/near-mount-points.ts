@@ -7,6 +7,7 @@ import { sites } from '@hubtack/drizzle/schema/sites.js';
 import { eq } from 'drizzle-orm';
 import { baseDistance } from '../common/base-distance.js';
 import { DATABASE } from '../database/database.module.js';
+import { basePlaceOf } from '../rovers/base-place.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import { SettingsService } from '../settings/settings.service.js';
 import { LostFixRepository } from './lost-fix.repository.js';
@@ -29,18 +30,23 @@ export class NearMountPoints {
       this.placeOf(row) ?? this.lostFixes.members(row.id).map((member) => this.placeOf(member))[0];
     if (!place) return [];
     const { maxBaselineKm } = this.settings.get().limits;
-    return this.database
-      .select()
-      .from(correctionSources)
-      .all()
-      .flatMap(({ mountPoint, name, baseLatitude, baseLongitude }) => {
-        if (baseLatitude === null || baseLongitude === null) return [];
-        const distanceM = baseDistance(place.latitude, place.longitude, baseLatitude, baseLongitude);
-        const isInRange = distanceM <= maxBaselineKm * 1000;
-        return [{ mountPoint, name, distanceM, isOwn: mountPoint === row.mountPoint, isInRange }];
-      })
-      .toSorted((a, b) => a.distanceM - b.distanceM)
-      .slice(0, MOST);
+    return (
+      this.database
+        .select()
+        .from(correctionSources)
+        .all()
+        // Another one that checks find down is no help.
+        .filter(({ downSince, mountPoint }) => downSince === null || mountPoint === row.mountPoint)
+        .flatMap(({ mountPoint, name, ...source }) => {
+          const base = basePlaceOf(source);
+          if (!base) return [];
+          const distanceM = baseDistance(place.latitude, place.longitude, base.latitude, base.longitude);
+          const isInRange = distanceM <= maxBaselineKm * 1000;
+          return [{ mountPoint, name, distanceM, isOwn: mountPoint === row.mountPoint, isInRange }];
+        })
+        .toSorted((a, b) => a.distanceM - b.distanceM)
+        .slice(0, MOST)
+    );
   }
 
   private placeOf({ roverId, crewId }: LostFixRow): { latitude: number; longitude: number } | null {

@@ -13,6 +13,7 @@ import { eq } from 'drizzle-orm';
 import { PasswordService } from '../auth/password.service.js';
 import { hashOfToken, newToken } from '../auth/tokens.js';
 import { Clock } from '../common/clock.js';
+import { CorrectionPasswords } from '../corrections/passwords.js';
 import { DemoPastService } from './demo-past.service.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
@@ -28,6 +29,7 @@ export class DemoService implements OnModuleInit {
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     @Inject(ENVIRONMENT) private readonly environment: Environment,
     private readonly passwords: PasswordService,
+    private readonly sourcePasswords: CorrectionPasswords,
     private readonly past: DemoPastService,
     private readonly clock: Clock,
   ) {}
@@ -37,7 +39,13 @@ export class DemoService implements OnModuleInit {
     if (this.database.select({ id: users.id }).from(users).limit(1).get()) return;
     const passwordHash = await this.passwords.hash(DEMO_PASSWORD);
     const began = performance.now();
-    seedDemoFirm(this.database, { now: this.clock.now(), passwordHash, toSpans: spansOf });
+    seedDemoFirm(this.database, {
+      now: this.clock.now(),
+      passwordHash,
+      casterPort: this.environment.DEMO_CASTER_PORT,
+      sealPassword: (sourceId, password) => this.sourcePasswords.seal(sourceId, password),
+      toSpans: spansOf,
+    });
     this.writeKeys();
     this.past.fill();
     this.logger.log({ seconds: Math.round(performance.now() - began) / 1000 }, 'demo firm seeded');

@@ -1,5 +1,6 @@
 import { Module } from '@nestjs/common';
 import { AuthModule } from '../auth/auth.module.js';
+import { CorrectionsModule } from '../corrections/corrections.module.js';
 import { SettingsModule } from '../settings/settings.module.js';
 import { ShiftsModule } from '../shifts/shifts.module.js';
 import { LostFixesModule } from '../lost-fixes/lost-fixes.module.js';
@@ -10,7 +11,15 @@ import { DemoService } from './demo.service.js';
 import { RetentionService } from './retention.service.js';
 
 @Module({
-  imports: [AuthModule, SettingsModule, ShiftsModule, LostFixesModule, RoversModule, WeeklyModule],
+  imports: [
+    AuthModule,
+    CorrectionsModule,
+    SettingsModule,
+    ShiftsModule,
+    LostFixesModule,
+    RoversModule,
+    WeeklyModule,
+  ],
   providers: [DemoPastService, DemoService, RetentionService],
   exports: [RetentionService],
 })

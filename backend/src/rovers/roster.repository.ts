@@ -6,6 +6,7 @@ import { roverAssignments, rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { sites } from '@hubtack/drizzle/schema/sites.js';
 import { and, eq, gt, isNull, lte, or } from 'drizzle-orm';
 import { DATABASE } from '../database/database.module.js';
+import { basePlaceOf } from './base-place.js';
 
 /** What a lane says that no sentence changes. */
 export interface RosterEntry {
@@ -18,6 +19,8 @@ export interface RosterEntry {
   mountPoint: string | null;
   baseLatitude: number | null;
   baseLongitude: number | null;
+  /** Since when checks of its correction source find it down, ms UTC. */
+  sourceDownSince: number | null;
   /** Since when this crew has the rover, ms UTC; null without a crew. */
   assignedAt: number | null;
 }
@@ -44,6 +47,9 @@ export class RosterRepository {
         mountPoint: correctionSources.mountPoint,
         baseLatitude: correctionSources.baseLatitude,
         baseLongitude: correctionSources.baseLongitude,
+        decodedLatitude: correctionSources.decodedLatitude,
+        decodedLongitude: correctionSources.decodedLongitude,
+        sourceDownSince: correctionSources.downSince,
         assignedAt: roverAssignments.startAt,
       })
       .from(rovers)
@@ -52,7 +58,15 @@ export class RosterRepository {
       .leftJoin(sites, eq(sites.id, crews.siteId))
       .leftJoin(correctionSources, eq(correctionSources.id, rovers.correctionSourceId))
       .where(eq(rovers.retired, false))
-      .all();
+      .all()
+      .map(({ decodedLatitude, decodedLongitude, ...entry }) => {
+        const place = basePlaceOf({ ...entry, decodedLatitude, decodedLongitude });
+        return {
+          ...entry,
+          baseLatitude: place?.latitude ?? null,
+          baseLongitude: place?.longitude ?? null,
+        };
+      });
   }
 
   /** The mount point that a rover takes its corrections from; null without one. */
