@@ -27,6 +27,14 @@ const queries: [index: string, sql: string][] = [
     'outbox_waiting',
     'SELECT * FROM outbox WHERE sent_at IS NULL AND failed_at IS NULL AND next_try_at <= 5 ORDER BY next_try_at',
   ],
+  [
+    'correction_checks_source',
+    'SELECT * FROM correction_checks WHERE source_id = 1 ORDER BY started_at DESC LIMIT 50',
+  ],
+  ['set_up_cards_rover', 'SELECT * FROM set_up_cards WHERE rover_id = 1 ORDER BY at DESC LIMIT 30'],
+  ['check_shots_rover', 'SELECT * FROM check_shots WHERE rover_id = 1 ORDER BY at DESC LIMIT 30'],
+  ['check_shots_at', 'SELECT * FROM check_shots WHERE at >= 5 AND at < 9'],
+  ['logs_at', 'SELECT * FROM logs ORDER BY at DESC LIMIT 50'],
   ['taps_at', 'DELETE FROM taps WHERE at < 5'],
 ];
 let test: ReturnType<typeof makeTestDatabase>;
