@@ -1,6 +1,7 @@
 import { createServer, type AddressInfo } from 'node:net';
 import type { CheckReport } from '@hubtack/contracts/corrections/check.js';
-import { startCaster, type Caster, type CasterFaults } from '@hubtack/simulators/caster/caster.js';
+import { startCaster, type Caster } from '@hubtack/simulators/caster/caster.js';
+import type { CasterFaults } from '@hubtack/simulators/caster/caster-faults.js';
 import type { MountPointOptions, StreamFaults } from '@hubtack/simulators/caster/mount-point.js';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { checkSource, testBase, testLogin } from '../harness/check-source.js';

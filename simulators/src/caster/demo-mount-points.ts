@@ -73,6 +73,7 @@ export const demoMountPoints = (): MountPointOptions[] => [
   {
     name: 'RECORD',
     identifier: 'Recorded base',
+    country: 'FIN',
     stream: { kind: 'recording', bytes: recording() },
     latitude: 63.35665315,
     longitude: 23.35591775,

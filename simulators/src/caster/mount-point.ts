@@ -13,8 +13,12 @@ export interface StreamFaults {
   silent?: boolean;
   /** Says nothing at all to the request. */
   mute?: boolean;
+  /** Sends nothing before it has had a GGA, as a network does. */
+  waitsForPosition?: boolean;
   /** Sends so many frames and then nothing more. */
   stallAfterFrames?: number;
+  /** The same in bytes: most often in the middle of a frame. */
+  stallAfterBytes?: number;
   /** Cuts the connection in the middle of the frame after so many. */
   cutAfterFrames?: number;
   /** So many random bytes between the frames. */
@@ -48,6 +52,8 @@ export interface MountPointOptions {
   /** A network that computes a virtual base: sends once it has had a GGA, from a base near that place. */
   isNetwork?: boolean;
   identifier?: string;
+  /** ISO 3166, three letters. */
+  country?: string;
   /** Seconds between two station messages; 1 when not said. */
   stationEverySeconds?: number;
   faults?: StreamFaults;

@@ -1,22 +1,31 @@
 import type { Socket } from 'node:net';
-import { readPosition } from './position.js';
+import { gzipSync } from 'node:zlib';
+import type { RandomGenerator } from 'pure-rand/types/RandomGenerator';
 import { between, randomOf } from '../scenarios/random.js';
-import { framesOf, type Frame, type FrameSource } from './frames.js';
+import { framesOf, type FrameSource } from './frames.js';
 import type { MountPointOptions } from './mount-point.js';
+import { readPosition } from './position.js';
 
 interface StreamOptions {
   isChunked: boolean;
+  isCompressed: boolean;
   seed: number;
   secondMs: number;
+  /** Now, ms UTC. */
+  startAt: number;
 }
 
-/** Sends the frames of a mount point over one connection, second by second, with its faults. */
+/** A client that takes nothing for so long that this much waits is let go. */
+const MOST_WAITING_BYTES = 1_000_000;
+
+/** Sends the frames of a mount point over one connection, second by second, with its faults, until the connection ends. */
 export class CasterStream {
   private readonly frames: FrameSource;
-  private readonly random;
-  private timer: NodeJS.Timeout | null = null;
+  private readonly random: RandomGenerator;
+  private readonly timer: NodeJS.Timeout;
   private second = 0;
-  private sent = 0;
+  private sentFrames = 0;
+  private sentBytes = 0;
   private place: { latitude: number; longitude: number } | null = null;
 
   constructor(
@@ -24,49 +33,48 @@ export class CasterStream {
     private readonly mountPoint: MountPointOptions,
     private readonly options: StreamOptions,
   ) {
-    this.frames = framesOf(mountPoint, options.seed);
+    this.frames = framesOf(mountPoint, options.seed, options.startAt);
     this.random = randomOf(options.seed + 1);
-  }
-
-  start(): void {
+    this.timer = setInterval(() => this.send(), options.secondMs);
+    socket.once('close', () => clearInterval(this.timer));
     this.send();
-    this.timer = setInterval(() => this.send(), this.options.secondMs);
-  }
-
-  stop(): void {
-    if (this.timer) clearInterval(this.timer);
-    this.timer = null;
   }
 
   /** A rover has said where it is. */
   locate(gga: string): void {
-    const wasWaiting = this.place === null;
+    const isFirst = this.place === null;
     this.place = readPosition(gga) ?? this.place;
-    if (wasWaiting && this.place && this.mountPoint.isNetwork) this.send();
+    if (isFirst && this.place && this.wantsPosition()) this.send();
+  }
+
+  private wantsPosition(): boolean {
+    return this.mountPoint.isNetwork === true || this.mountPoint.faults?.waitsForPosition === true;
   }
 
   private send(): void {
     const { faults = {}, isNetwork } = this.mountPoint;
-    if (faults.silent || (isNetwork && !this.place)) return;
+    if (faults.silent || (this.wantsPosition() && !this.place)) return;
     if (faults.onlyGarbage) return this.write(this.garbage(200));
     for (const frame of this.frames(this.second++, isNetwork ? this.place : null)) {
       if (faults.noStation && frame.isStation) continue;
-      if (faults.stallAfterFrames !== undefined && this.sent >= faults.stallAfterFrames) return;
-      if (faults.cutAfterFrames !== undefined && this.sent >= faults.cutAfterFrames) {
-        this.write(frame.bytes.subarray(0, frame.bytes.length >> 1));
-        this.stop();
-        this.socket.end();
-        return;
-      }
-      this.sent++;
+      if (this.sentFrames >= (faults.stallAfterFrames ?? Infinity)) return;
+      if (this.sentFrames >= (faults.cutAfterFrames ?? Infinity)) return this.cut(frame.bytes);
+      this.sentFrames++;
       if (faults.garbageBytes) this.write(this.garbage(faults.garbageBytes));
-      this.write(this.damaged(frame, faults.badCrcEvery));
+      this.write(this.damaged(frame.bytes, faults.badCrcEvery));
     }
   }
 
-  private damaged({ bytes }: Frame, every: number | undefined): Uint8Array {
-    if (every === undefined || this.sent % every !== 0) return bytes;
-    const wrong = Uint8Array.from(bytes);
+  /** Half a frame, and the end. */
+  private cut(frame: Uint8Array): void {
+    clearInterval(this.timer);
+    this.write(frame.subarray(0, frame.length >> 1));
+    this.socket.end();
+  }
+
+  private damaged(frame: Uint8Array, every: number | undefined): Uint8Array {
+    if (every === undefined || this.sentFrames % every !== 0) return frame;
+    const wrong = Uint8Array.from(frame);
     wrong[wrong.length - 1]! ^= 0xff;
     return wrong;
   }
@@ -77,12 +85,18 @@ export class CasterStream {
   }
 
   private write(bytes: Uint8Array): void {
-    if (this.socket.destroyed) return;
-    if (!this.options.isChunked) this.socket.write(bytes);
-    else {
-      this.socket.write(`${bytes.length.toString(16)}\r\n`);
-      this.socket.write(bytes);
-      this.socket.write('\r\n');
-    }
+    const { socket, mountPoint } = this;
+    const room = (mountPoint.faults?.stallAfterBytes ?? Infinity) - this.sentBytes;
+    if (room <= 0 || !socket.writable) return;
+    if (socket.writableLength > MOST_WAITING_BYTES) return void socket.destroy();
+    const sent = room < bytes.length ? bytes.subarray(0, room) : bytes;
+    this.sentBytes += sent.length;
+    // Each piece is a member of its own: RFC 1952 lets them follow one another.
+    const body = this.options.isCompressed ? gzipSync(sent) : sent;
+    if (!this.options.isChunked) socket.write(body);
+    else
+      socket.write(
+        Buffer.concat([Buffer.from(`${body.length.toString(16)}\r\n`), body, Buffer.from('\r\n')]),
+      );
   }
 }
