@@ -18,6 +18,7 @@ import { FixesModule } from './fixes/fixes.module.js';
 import { HealthModule } from './health/health.module.js';
 import { ImportsModule } from './imports/imports.module.js';
 import { IngestModule } from './ingest/ingest.module.js';
+import { LogsModule } from './logs/logs.module.js';
 import { LostFixesModule } from './lost-fixes/lost-fixes.module.js';
 import { MetricsModule } from './metrics/metrics.module.js';
 import { NoticesModule } from './notices/notices.module.js';
@@ -61,6 +62,7 @@ export class AppModule {
         IngestModule,
         LostFixesModule,
         PhotosModule,
+        LogsModule,
         CrewDayModule,
         WeeklyModule,
         SheetsModule,

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { id, instantText } from '../common.js';
+import { id, idParam, instantText } from '../common.js';
 import { fixState } from '../fixes/fix-state.js';
 import { stateTotals } from '../fixes/timeline.js';
 import { cause } from '../lost-fixes/cause.js';
@@ -10,16 +10,29 @@ export const logStatuses = ['waiting', 'reading', 'done', 'failed', 'cancelled']
 export const logStatus = z.enum(logStatuses);
 export type LogStatus = z.infer<typeof logStatus>;
 
+/** What comes beside the file, as text in a form. */
+export const logFields = z.object({
+  date: z.iso
+    .date('Write the UTC date of the first sentence as YYYY-MM-DD')
+    .optional()
+    .describe('UTC date of the first sentence'),
+  roverId: idParam.optional().describe('Also enter the epochs into the history of this rover'),
+});
+export type LogFields = z.infer<typeof logFields>;
+
 /** Totals and transitions are over [firstTime, lastTime). */
 export const logSummary = z.object({
-  sentences: z.number().int(),
-  ggaSentences: z.number().int(),
+  sentences: z.number().int().describe('All that begin like one, faulty ones too'),
+  ggaSentences: z.number().int().describe('Those that could be read'),
   badChecksum: z.number().int(),
-  malformed: z.number().int(),
-  ignored: z.number().int().describe('Sentences that nothing is read from'),
-  untimed: z.number().int(),
-  epochs: z.number().int(),
-  duplicates: z.number().int(),
+  malformed: z.number().int().describe('Faulty in another way'),
+  ignored: z
+    .number()
+    .int()
+    .describe('Sentences that nothing is read from, and lines that are none, as the ingest counts them'),
+  untimed: z.number().int().describe('GGAs that nothing says the time of'),
+  epochs: z.number().int().describe('One for each instant'),
+  duplicates: z.number().int().describe('Further GGAs of an instant that is there already'),
   firstTime: instantText.nullable(),
   lastTime: instantText.nullable(),
   totals: stateTotals,
@@ -37,6 +50,15 @@ export const logLoss = z.object({
   evidence: z.array(z.string()),
 });
 export type LogLoss = z.infer<typeof logLoss>;
+
+/** What became of the epochs in the history of the rover. */
+export const logHistory = z.object({
+  accepted: z.number().int(),
+  duplicates: z.number().int().describe('There already'),
+  refused: z.number().int(),
+  reasons: z.array(z.string()).describe('Why some were refused, in words'),
+});
+export type LogHistory = z.infer<typeof logHistory>;
 
 /** What the page draws beside the summary. */
 export const logDetail = z.object({
@@ -56,6 +78,8 @@ export const logDetail = z.object({
   ),
   moreRejected: z.number().int(),
   dateFrom: z.enum(['given', 'sentences', 'arrival']).nullable().describe('Where the day was taken from'),
+  notes: z.array(z.string()).describe('What a reader of the figures should know, in words'),
+  history: logHistory.nullable().describe('Null without a rover'),
 });
 export type LogDetail = z.infer<typeof logDetail>;
 
@@ -70,7 +94,7 @@ export const log = z.object({
   status: logStatus,
   progress: z.number().min(0).max(1),
   problem: z.string().nullable().describe('Why it failed, in words'),
-  summary: logSummary.nullable(),
+  summary: logSummary.nullable().describe('In the list without the transitions themselves'),
 });
 export type Log = z.infer<typeof log>;
 export const logWithDetail = log.extend({ detail: logDetail.nullable() });
