@@ -36,6 +36,10 @@ describe('geodetic and earth-centred coordinates', () => {
           const [x, y, z] = geocentric.forward<[number, number, number]>([longitude, latitude, heightM]);
           const ours = ecefOf({ latitude, longitude, heightM });
           expect(Math.hypot(ours.x - x, ours.y - y, ours.z - z)).toBeLessThan(1e-4);
+          const [east, north, up] = geocentric.inverse<[number, number, number]>([x, y, z]);
+          const theirs = ecefOf({ latitude: north, longitude: east, heightM: up });
+          const back = ecefOf(geodeticOf({ x, y, z }));
+          expect(Math.hypot(back.x - theirs.x, back.y - theirs.y, back.z - theirs.z)).toBeLessThan(1e-4);
         },
       ),
       { numRuns: 500 },
@@ -79,6 +83,21 @@ describe('geodesics of the geographiclib-geodesic package, which distances to ba
     );
     expect(found.s12).toBeCloseTo(54972.271, 2.9);
     expect((found.azi1! + 360) % 360).toBeCloseTo(degrees(306, 52, 5.37), 5);
+    // Seen from the other end.
+    expect((found.azi2! + 180) % 360).toBeCloseTo(degrees(127, 10, 25.07), 5);
+  });
+  it('the same sample, direct', () => {
+    const [latitude, longitude] = [degrees(-37, 57, 3.7203), degrees(144, 25, 29.5244)];
+    const found = geodesic.Geodesic.WGS84.Direct(latitude, longitude, degrees(306, 52, 5.37), 54972.271);
+    expect(found.lat2).toBeCloseTo(degrees(-37, 39, 10.1561), 7.5);
+    expect(found.lon2).toBeCloseTo(degrees(143, 55, 35.3839), 7.5);
+  });
+  it('JFK to LHR (GeographicLib manual): 5551.76 km', () => {
+    expect(inverse([40.6, -73.8], [51.6, -0.5]).s12! / 1000).toBeCloseTo(5551.76, 2);
+  });
+  it('one degree, north and east of 0, 0 (computed with GeographicLib 2.1.2)', () => {
+    expect(inverse([0, 0], [1, 0]).s12).toBeCloseTo(110574.3886, 4);
+    expect(inverse([0, 0], [0, 1]).s12).toBeCloseTo(111319.4908, 4);
   });
   it('Wellington to Salamanca (README of geographiclib-geodesic): 19959679.267 m', () => {
     expect(inverse([-41.32, 174.81], [40.96, -5.5]).s12).toBeCloseTo(19959679.267, 2.9);
@@ -89,6 +108,8 @@ describe('geodesics of the geographiclib-geodesic package, which distances to ba
       [degrees(1, 21, 33), degrees(103, 59, 22)],
     );
     expect(found.s12).toBeCloseTo(15347628, -0.2);
+    expect(found.azi1).toBeCloseTo(degrees(3, 18, 29.9), 4);
+    expect(found.azi2).toBeCloseTo(degrees(177, 29, 9.2), 4);
   });
   it('nearly antipodal points converge (Karney 2013 discusses the region): 19936288.578965 m', () => {
     expect(inverse([0, 0], [0.5, 179.5]).s12).toBeCloseTo(19936288.578965, 5);

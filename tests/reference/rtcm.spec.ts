@@ -22,6 +22,22 @@ describe('CRC-24Q', () => {
   it('of 123456789 is 0xCDE703 (catalogue of parametrised CRC algorithms, CRC-24/LTE-A)', () => {
     expect(crc24q(Buffer.from('123456789'))).toBe(0xcde703);
   });
+  it('is not CRC-24/OPENPGP, the same polynomial from another start, which gives 0x21CF02', () => {
+    const withStart = (start: number, text: string) => {
+      let crc = start;
+      for (const byte of Buffer.from(text)) {
+        crc ^= byte << 16;
+        for (let bit = 0; bit < 8; bit++)
+          crc = crc & 0x800000 ? ((crc << 1) ^ 0x1864cfb) & 0xffffff : crc << 1;
+      }
+      return crc;
+    };
+    expect(withStart(0xb704ce, '123456789')).toBe(0x21cf02);
+    expect(crc24q(Buffer.from('123456789'))).not.toBe(0x21cf02);
+    // Bit by bit, so that the table has a second computation beside it.
+    for (const text of ['', 'a', '\u0000\u00ff', 'a longer text, of more bytes than a word has'])
+      expect(crc24q(Buffer.from(text))).toBe(withStart(0, text));
+  });
   it('over a whole frame with its CRC is 0', () => {
     expect(crc24q(example)).toBe(0);
     expect(crc24q(example, 0, example.length - 3)).toBe(0x360b98);
@@ -62,8 +78,19 @@ describe('the published 1005 frame', () => {
       expect(numbersOf(wrong)).toEqual([]);
     }
   });
-  it('without its last byte is no frame', () => {
-    expect(numbersOf(example.subarray(0, -1))).toEqual([]);
+  it('with any one byte changed to any other is no frame', () => {
+    for (let at = 0; at < example.length; at++)
+      for (let change = 1; change < 256; change++) {
+        const wrong = Uint8Array.from(example);
+        wrong[at]! ^= change;
+        expect(numbersOf(wrong)).toEqual([]);
+      }
+  });
+  it('cut anywhere is no frame', () => {
+    for (let length = 0; length < example.length; length++) {
+      expect(numbersOf(example.subarray(0, length))).toEqual([]);
+      expect(numbersOf(example.subarray(example.length - length))).toEqual([]);
+    }
   });
 });
 
@@ -89,6 +116,15 @@ describe('a recorded base station (simulators/recordings/aamakinen.rtcm3)', () =
       1230: 21,
     });
     expect([wrong, outside]).toEqual([0, 0]);
+  });
+  it('with any one bit wrong has one frame less, and all the others', () => {
+    const frames = numbersOf(bytes).length;
+    // One bit in each stretch of so many: a prime, so that every place in a byte and in the frames comes up.
+    for (let bit = 0; bit < bytes.length * 8; bit += 1009) {
+      const wrong = Uint8Array.from(bytes);
+      wrong[bit >> 3]! ^= 1 << (bit & 7);
+      expect(numbersOf(wrong)).toHaveLength(frames - 1);
+    }
   });
   it('stands at 63.35665315 N, 23.35591775 E, 93.761 m', () => {
     const stations: Station[] = [];

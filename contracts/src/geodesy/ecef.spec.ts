@@ -24,3 +24,24 @@ it('there and back is the same place to a hundredth of a millimetre, at the pole
     },
   );
 });
+
+it('whatever a base says of itself, its latitude is one', () => {
+  const anywhere = double({ min: -13_743_895, max: 13_743_895, noNaN: true });
+  assert(
+    property(anywhere, anywhere, anywhere, (x, y, z) => {
+      const { latitude, longitude, heightM } = geodeticOf({ x, y, z });
+      expect(Math.abs(latitude)).toBeLessThanOrEqual(90);
+      expect(Math.abs(longitude)).toBeLessThanOrEqual(180);
+      expect(heightM).not.toBeNaN();
+    }),
+    {
+      examples: [
+        [0, 0, 0],
+        [1000, 0, 0],
+        [0, 0, -1],
+        [-42_000, 10, -1],
+      ],
+    },
+  );
+  expect(geodeticOf({ x: 0, y: 0, z: 0 })).toEqual({ latitude: 0, longitude: 0, heightM: -6_378_137 });
+});

@@ -61,6 +61,33 @@ describe('RTCM 3 frames', () => {
       { numRuns: 300 },
     );
   });
+  it('are all found between any bytes at all, preambles among them', () => {
+    const anything = array(constantFrom(0xd3, 0xd3, 0, 1, 3, 4, 0x13, 0xff), { maxLength: 40 }).map((bytes) =>
+      Uint8Array.from(bytes),
+    );
+    assert(
+      property(
+        stream,
+        array(anything, { minLength: 7, maxLength: 7 }),
+        array(integer({ min: 1, max: 40 }), { minLength: 1, maxLength: 8 }),
+        (payloads, noises, sizes) => {
+          const bytes = joined([
+            ...payloads.flatMap((one, index) => [noises[index]!, frameOf(one)]),
+            noises[6]!,
+          ]);
+          const whole = read(bytes);
+          expect(whole.payloads).toEqual(payloads.map(hex));
+          expect(read(bytes, [1])).toEqual(whole);
+          expect(read(bytes, sizes)).toEqual(whole);
+        },
+      ),
+      { numRuns: 300 },
+    );
+  });
+  it('inside of which another frame stands are that one frame', () => {
+    const inner = frameOf(Uint8Array.of(0x3e, 0xd0, 1));
+    expect(read(frameOf(joined([Uint8Array.of(0x43, 0x50), inner]))).payloads).toHaveLength(1);
+  });
   it('with one bit wrong anywhere are not counted, and those around them are', () => {
     assert(
       property(payload, payload, payload, integer({ min: 0, max: 1_000_000 }), (first, hit, last, where) => {
