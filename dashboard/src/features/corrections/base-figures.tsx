@@ -1,7 +1,7 @@
 import type { CheckedBase } from '@hubtack/contracts/corrections/check.js';
 import { distance } from '../../lib/format';
 import { useMe } from '../../lib/session';
-import { baseAlarms, degrees, fineLength, precision } from './base-words';
+import { baseAlarms, degrees, expectedWords, fineLength } from './base-words';
 
 /** A base that is another one, or stands elsewhere, before anything else about the check. */
 export function BaseAlarms({ base }: { base: CheckedBase }) {
@@ -26,6 +26,7 @@ export function BaseAlarms({ base }: { base: CheckedBase }) {
 /** Where the base is by its own message, how far from the work, and what can be expected at that distance. */
 export function BaseFigures({ base, place }: { base: CheckedBase; place: string | null }) {
   const { units } = useMe();
+  const expected = expectedWords(base, units);
   return (
     <section className="check-part" aria-label="The base">
       <h3>The base</h3>
@@ -59,12 +60,10 @@ export function BaseFigures({ base, place }: { base: CheckedBase; place: string 
             </dd>
           </div>
         )}
-        {base.horizontalMm !== null && base.verticalMm !== null && (
+        {expected !== null && (
           <div>
             <dt>To be expected there</dt>
-            <dd>
-              {precision(base.horizontalMm, units)} horizontal, {precision(base.verticalMm, units)} vertical
-            </dd>
+            <dd>{expected}</dd>
           </div>
         )}
       </dl>
@@ -73,7 +72,7 @@ export function BaseFigures({ base, place }: { base: CheckedBase; place: string 
           ? 'A virtual base is made near the rover: its distance says little about quality.'
           : base.distanceM === null
             ? 'Choose a site or a rover before the check, and it says how far the base is and what can be expected there.'
-            : 'Expected: 8 mm + 1 ppm horizontal and 15 mm + 1 ppm vertical, common practice under an open sky; no promise.'}
+            : 'Expected: 8 mm + 1 ppm horizontal and 15 mm + 1 ppm vertical up to about 30 km, common practice under an open sky; no promise.'}
       </p>
     </section>
   );

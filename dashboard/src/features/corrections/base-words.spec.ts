@@ -1,6 +1,6 @@
 import type { CheckedBase } from '@hubtack/contracts/corrections/check.js';
 import { describe, expect, it } from 'vitest';
-import { baseAlarms, degrees, precision } from './base-words';
+import { baseAlarms, degrees, expectedWords } from './base-words';
 
 const base = (change: Partial<CheckedBase> = {}): CheckedBase => ({
   stationId: 2003,
@@ -36,6 +36,9 @@ describe('a base that is not where it was', () => {
 
 it('positions and precisions as people read them', () => {
   expect(degrees(-41.44, 147.14)).toBe('41.44000000° S, 147.14000000° E');
-  expect(precision(16.4, 'metric')).toBe('16 mm');
-  expect(precision(30.48, 'feet')).toBe('0.10 ft');
+  const near = base({ distanceM: 8400, horizontalMm: 16.4, verticalMm: 30.48 });
+  expect(expectedWords(near, 'metric')).toBe('16 mm horizontal, 30 mm vertical');
+  expect(expectedWords(near, 'feet')).toBe('0.05 ft horizontal, 0.10 ft vertical');
+  expect(expectedWords({ ...near, distanceM: 30_001 }, 'metric')).toMatch(/too far/);
+  expect(expectedWords({ ...near, distanceM: null }, 'metric')).toBeNull();
 });

@@ -7,8 +7,19 @@ export const fineLength = (metres: number, units: Me['units']): string =>
   units === 'feet' ? `${(metres * FEET_A_METRE).toFixed(3)} ft` : `${metres.toFixed(3)} m`;
 
 /** A precision: whole millimetres, or hundredths of a foot. */
-export const precision = (mm: number, units: Me['units']): string =>
+const precision = (mm: number, units: Me['units']): string =>
   units === 'feet' ? `${((mm / 1000) * FEET_A_METRE).toFixed(2)} ft` : `${Math.round(mm)} mm`;
+
+/** How far the rule of thumb for a single base is believed (common practice, no source). */
+const RULE_HOLDS_M = 30_000;
+
+/** What can be expected at the distance of the work; null where nobody asked from where, or the base is virtual. */
+export function expectedWords(base: CheckedBase, units: Me['units']): string | null {
+  const { distanceM, horizontalMm, verticalMm } = base;
+  if (distanceM === null || horizontalMm === null || verticalMm === null) return null;
+  if (distanceM > RULE_HOLDS_M) return 'too far for a single base';
+  return `${precision(horizontalMm, units)} horizontal, ${precision(verticalMm, units)} vertical`;
+}
 
 /** Degrees with eight decimals: about a millimetre. */
 export const degrees = (latitude: number, longitude: number): string =>

@@ -1,9 +1,7 @@
 import { checkStepLabels, type CheckStep } from '@hubtack/contracts/corrections/check.js';
 import type { ReactNode } from 'react';
-import { asSentence, markOf, markWords } from './check-words';
+import { asSentence, markOf, markWords, tookWords } from './check-words';
 import { OutcomeMark } from './outcome-mark';
-
-const tookWords = (ms: number): string => (ms < 1000 ? `${ms} ms` : `${(ms / 1000).toFixed(1)} s`);
 
 /** Steps that were skipped for the same reason say it once. */
 const isNews = ({ seen, outcome }: CheckStep, before: CheckStep | undefined): boolean =>

@@ -1,6 +1,6 @@
 import type { CheckStep } from '@hubtack/contracts/corrections/check.js';
 import { describe, expect, it } from 'vitest';
-import { announcement, markOf, sourceVerdict, verdictOf } from './check-words';
+import { announcement, asSentence, markOf, sourceVerdict, verdictOf } from './check-words';
 
 const at = '2026-12-01T22:12:00Z';
 const timeOf = () => 'at 09:12';
@@ -56,6 +56,11 @@ describe('what is said aloud', () => {
     expect(verdictOf(check)).toEqual({ mark: 'skipped', words: 'cancelled' });
     expect(announcement({ ...check, steps: [] })).toBe('The check was cancelled.');
   });
+});
+
+it('warnings are sentences, however they come', () => {
+  expect(asSentence('26 frames were dropped')).toBe('26 frames were dropped.');
+  expect(asSentence('is it a nought?')).toBe('Is it a nought?');
 });
 
 it('a pass with something odd about it does not look like any other', () => {

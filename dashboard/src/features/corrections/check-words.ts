@@ -64,6 +64,9 @@ export function announcement(check: Ended & Pick<CorrectionCheck, 'steps'>): str
   return `${step} The check ${end}.`.trim();
 }
 
+/** 7 ms, 1.4 s. */
+export const tookWords = (ms: number): string => (ms < 1000 ? `${ms} ms` : `${(ms / 1000).toFixed(1)} s`);
+
 const capital = (words: string): string => words.charAt(0).toUpperCase() + words.slice(1);
 export const capitalised = ({ mark, words }: Verdict): Verdict => ({ mark, words: capital(words) });
 export const asSentence = (words: string): string => capital(words).replace(/([^.?!])$/, '$1.');

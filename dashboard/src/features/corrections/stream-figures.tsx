@@ -1,4 +1,5 @@
 import type { CheckedStream } from '@hubtack/contracts/corrections/check.js';
+import { tookWords } from './check-words';
 
 const grouped = new Intl.NumberFormat('en-GB');
 const seconds = (value: number): string => `${value.toFixed(value < 10 ? 1 : 0)} s`;
@@ -15,7 +16,7 @@ export function StreamFigures({ stream }: { stream: CheckedStream }) {
         </div>
         <div>
           <dt>First byte after</dt>
-          <dd>{stream.firstByteMs === null ? 'none came' : seconds(stream.firstByteMs / 1000)}</dd>
+          <dd>{stream.firstByteMs === null ? 'none came' : tookWords(stream.firstByteMs)}</dd>
         </div>
         <div>
           <dt>Frames with right CRC</dt>

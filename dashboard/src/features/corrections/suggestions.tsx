@@ -20,8 +20,9 @@ export function Suggestions({ source, check, mayChange, checkAgain }: Suggestion
   const [taken, setTaken] = useState<string | null>(null);
   const take = (mountPoint: string) =>
     change.mutate({ ...bodyOf(source), mountPoint }, { onSuccess: () => setTaken(mountPoint) });
-  // A wrong login is wrong at any other mount point too.
-  if (check.failedStep === 'login' || check.spellings.length + check.nearest.length === 0) return null;
+  // A wrong login is wrong at any other mount point too, and a position that was not sent is sent.
+  if (check.failedStep === 'login' || check.failedStep === 'position') return null;
+  if (check.spellings.length + check.nearest.length === 0) return null;
   const list = (title: string, mountPoints: readonly SuggestedMountPoint[]) =>
     mountPoints.length > 0 && (
       <SuggestionList
