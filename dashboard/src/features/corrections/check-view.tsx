@@ -7,10 +7,12 @@ import { dayAndTime, duration, utc } from '../../lib/format';
 import { useMe } from '../../lib/session';
 import { BaseAlarms, BaseFigures } from './base-figures';
 import { CheckSteps } from './check-steps';
-import { announcement, capitalised, verdictOf } from './check-words';
+import { announcement, capitalised, tookWords, verdictOf } from './check-words';
 import { OutcomeMark } from './outcome-mark';
 import { StreamFigures } from './stream-figures';
 import { Suggestions } from './suggestions';
+
+const SHORT_MS = 10_000;
 
 interface CheckViewProps {
   source: CorrectionSource;
@@ -65,6 +67,7 @@ function CheckHead({
   const { timeZone } = useMe();
   const cancel = useCancelCheck(source.id, check.id);
   const startedAt = Date.parse(check.startedAt);
+  const tookMs = check.endedAt === null ? null : Date.parse(check.endedAt) - startedAt;
   const { mark, words } = capitalised(verdictOf(check));
   return (
     <div className="check-head">
@@ -73,7 +76,7 @@ function CheckHead({
         <time dateTime={check.startedAt} title={utc(startedAt)}>
           {dayAndTime(startedAt, timeZone)}
         </time>
-        {check.endedAt !== null && `, took ${duration(Date.parse(check.endedAt) - startedAt)}`}
+        {tookMs !== null && `, took ${tookMs < SHORT_MS ? tookWords(tookMs) : duration(tookMs)}`}
         {check.place !== null && `, for ${check.place}`}
         {check.by === null ? ', by the timetable' : `, by ${check.by}`}
       </span>
