@@ -1,17 +1,14 @@
 import { Inject, Injectable } from '@nestjs/common';
 import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import { baseDistance } from '../common/base-distance.js';
+import type { Interval } from '../common/interval.js';
 import { ENVIRONMENT } from '../config/config.module.js';
 import type { Environment } from '../config/environment.js';
 import type { RosterEntry } from '../rovers/roster.repository.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { Episode } from './detector.js';
-import type { Evidence, EvidenceEpoch } from './diagnosis.js';
-
-const BEFORE_MS = 120_000;
-/** Of a long loss, its first minutes and its newest say what there is to say. */
-const FIRST_MS = 5 * 60_000;
-const NEWEST_MS = 10 * 60_000;
+import type { Evidence } from './diagnosis.js';
+import { evidenceWindow } from './evidence-window.js';
 
 type Source = Pick<RosterEntry, 'baseLatitude' | 'baseLongitude' | 'sourceDownSince' | 'mountPoint'>;
 
@@ -53,14 +50,14 @@ export class EvidenceReader {
         outage,
         sourceDown: null,
       };
-    const before =
-      kind === 'notHeard' ? [] : this.fixes.epochs(roverId, Math.max(start - BEFORE_MS, shiftStart), start);
+    const { before, since } = evidenceWindow(episode, shiftStart, until);
+    const read = (window: Interval) => this.fixes.epochs(roverId, window.start, window.end);
     return {
       kind,
       start,
       now: until,
-      before,
-      since: this.since(roverId, start, until),
+      before: before ? read(before) : [],
+      since: since.flatMap(read),
       correctedAt: this.correctedAt(roverId, shiftStart, until),
       baseDistanceM: this.distance(roverId, source),
       outage,
@@ -72,14 +69,6 @@ export class EvidenceReader {
   forgetSince(roverId: number, from: number): void {
     const known = this.looked.get(roverId);
     if (known && from < known.until) this.looked.delete(roverId);
-  }
-
-  private since(roverId: number, start: number, until: number): EvidenceEpoch[] {
-    if (until - start <= FIRST_MS + NEWEST_MS) return this.fixes.epochs(roverId, start, until);
-    return [
-      ...this.fixes.epochs(roverId, start, start + FIRST_MS),
-      ...this.fixes.epochs(roverId, until - NEWEST_MS, until),
-    ];
   }
 
   /** Goes through the epochs of a shift once; what has been looked through is not looked at again. */

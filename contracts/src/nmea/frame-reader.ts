@@ -4,7 +4,8 @@ export type FrameFault = 'badChecksum' | 'noChecksum' | 'malformed' | 'tooLong' 
 export interface FrameSink {
   /** A sentence whose checksum is right: its characters are bytes[start, end), without `$`, `*` and what follows. */
   sentence(bytes: Uint8Array, start: number, end: number, line: number): void;
-  fault(code: FrameFault, detail: string, line: number): void;
+  /** Its `$` is bytes[dollar]; the bytes are good for as long as the call lasts. */
+  fault(code: FrameFault, detail: string, line: number, bytes: Uint8Array, dollar: number): void;
   /** Bytes that are no sentence at all (comments, other protocols, line noise); once a line. */
   noise(line: number): void;
 }
@@ -75,7 +76,7 @@ export class FrameReader {
     this.carry = NO_BYTES;
     if (left.length > 0) {
       if (hasAddress(left, 1, left.length))
-        sink.fault('cutShort', 'the sentence ends in the middle', this.line);
+        sink.fault('cutShort', 'the sentence ends in the middle', this.line, left, 0);
       else this.markNoise(sink);
     }
     this.noisy = false;
@@ -161,6 +162,8 @@ export class FrameReader {
           'badChecksum',
           `the characters give ${hexByte(sum)}, the sentence says ${hexByte(given)}`,
           this.line,
+          bytes,
+          dollar,
         );
       else this.markNoise(sink);
       return star + 3;
@@ -171,7 +174,7 @@ export class FrameReader {
       return -1;
     }
     if (hasAddress(bytes, dollar + 1, star))
-      sink.fault('malformed', 'the checksum is not two hexadecimal digits', this.line);
+      sink.fault('malformed', 'the checksum is not two hexadecimal digits', this.line, bytes, dollar);
     else this.markNoise(sink);
     // What stands after the star may be the next sentence: go on at the first character that is no digit.
     return needed;
@@ -179,12 +182,13 @@ export class FrameReader {
 
   private brokenOff(bytes: Uint8Array, dollar: number, at: number, byte: number, sink: FrameSink): void {
     if (!hasAddress(bytes, dollar + 1, at)) this.markNoise(sink);
-    else if (byte === CR || byte === LF) sink.fault('noChecksum', 'the sentence has no checksum', this.line);
+    else if (byte === CR || byte === LF)
+      sink.fault('noChecksum', 'the sentence has no checksum', this.line, bytes, dollar);
     else if (byte === DOLLAR)
-      sink.fault('cutShort', 'another sentence begins before this one ends', this.line);
+      sink.fault('cutShort', 'another sentence begins before this one ends', this.line, bytes, dollar);
     else if (byte < 32 || byte > 126)
-      sink.fault('malformed', 'a character that no sentence may hold', this.line);
-    else sink.fault('tooLong', `longer than ${MAX_SENTENCE_BYTES} characters`, this.line);
+      sink.fault('malformed', 'a character that no sentence may hold', this.line, bytes, dollar);
+    else sink.fault('tooLong', `longer than ${MAX_SENTENCE_BYTES} characters`, this.line, bytes, dollar);
     // The rest of a broken line belongs to the fault that was just told.
     if (byte !== DOLLAR && byte !== CR && byte !== LF) this.skipping = true;
   }
