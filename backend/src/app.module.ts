@@ -26,6 +26,7 @@ import { loggingOf } from './operate/logging.js';
 import { OperateModule } from './operate/operate.module.js';
 import { PhotosModule } from './photos/photos.module.js';
 import { RoversModule } from './rovers/rovers.module.js';
+import { SetUpModule } from './set-up/set-up.module.js';
 import { SettingsModule } from './settings/settings.module.js';
 import { SheetsModule } from './sheets/sheets.module.js';
 import { SitesModule } from './sites/sites.module.js';
@@ -59,6 +60,7 @@ export class AppModule {
         RoversModule,
         CorrectionsModule,
         FixesModule,
+        SetUpModule,
         IngestModule,
         LostFixesModule,
         PhotosModule,

@@ -31,6 +31,8 @@ let otherRover: number;
 let otherSite: number;
 let ownLostFix: number;
 let otherLostFix: number;
+let otherCard: number;
+let otherShot: number;
 
 beforeAll(async () => {
   server = await startServer();
@@ -54,6 +56,31 @@ beforeAll(async () => {
     (await manager.json<{ id: number }>('POST', '/api/lost-fixes', { roverId, word: 'underCover', note })).id;
   ownLostFix = await flag(ownRover, 'ours');
   otherLostFix = await flag(otherRover, 'foreign');
+  const id = async (path: string, body: unknown) =>
+    (await manager.json<{ id: number }>('POST', path, body)).id;
+  otherCard = await id('/api/set-up-cards', {
+    roverId: otherRover,
+    poleHeightM: 1.8,
+    measuringPoint: 'phaseCentre',
+    antennaOffsetM: 0,
+    tilt: 'off',
+    correctionSourceId: null,
+    messageFormat: 'any',
+    toleranceProfile: null,
+    checkedBy: 'Technician',
+  });
+  const mark = { latitude: -41.44, longitude: 147.14, heightKind: 'geoid' };
+  otherShot = await id('/api/check-shots', {
+    roverId: otherRover,
+    controlPointId: await id('/api/control-points', {
+      name: 'PM 1',
+      ...mark,
+      height: null,
+      datum: null,
+      note: null,
+    }),
+    measure: { from: 'typed', ...mark, heightM: null },
+  });
   const document = await manager.json<{ paths: Record<string, Record<string, Operation>> }>(
     'GET',
     '/api/openapi.json',
@@ -140,10 +167,13 @@ describe('every route says who may', () => {
     const written = open((access) => Array.isArray(access) && access.includes('crewChief'));
     expect(written.filter((route) => !route.startsWith('GET '))).toEqual([
       'DELETE /api/notice-rules',
+      'POST /api/check-shots',
+      'POST /api/check-shots/preview',
       'POST /api/crews/{id}/shift/{step}',
       'POST /api/lost-fixes',
       'POST /api/lost-fixes/{id}/photos',
       'POST /api/notices/seen',
+      'POST /api/set-up-cards',
       'PUT /api/notice-rules',
       'PUT /api/subscriptions',
     ]);
@@ -234,6 +264,8 @@ describe('a crew chief reaches the own crew only', () => {
     '/api/crews/{id}/visits': () => otherCrew,
     '/api/crews/{id}/shift/{step}': () => otherCrew,
     '/api/lost-fixes/{id}': () => otherLostFix,
+    '/api/set-up-cards/{id}': () => otherCard,
+    '/api/check-shots/{id}': () => otherShot,
     '/api/lost-fixes/{id}/photos': () => otherLostFix,
     '/api/lost-fixes/{id}/photos/{photoId}': () => otherLostFix,
   };

@@ -183,7 +183,9 @@ export class BoardService implements OnApplicationBootstrap, BeforeApplicationSh
       if (now < start || now >= end) this.reload();
       const moved = this.lanes.movedByClock();
       for (const id of moved) this.moved.changed.add(id);
-      if (moved.length > 0) this.scheduleFrame();
+      const badges = this.lanes.badgesMoved();
+      for (const id of badges) this.moved.whole.add(id);
+      if (moved.length + badges.length > 0) this.scheduleFrame();
       this.hub.sweep(now);
     } catch (error) {
       // A locked database must not end the board; the next sweep tries again.

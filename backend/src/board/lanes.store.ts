@@ -1,5 +1,6 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { Lane, LaneChange } from '@hubtack/contracts/board/lane.js';
+import type { AgainReason } from '@hubtack/contracts/set-up/check-shot.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { firmSettings } from '@hubtack/drizzle/schema/firm-settings.js';
 import { Clock } from '../common/clock.js';
@@ -9,12 +10,17 @@ import { DATABASE } from '../database/database.module.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import type { HeardSpan } from '../fixes/timeline.js';
 import { dutyAt, type CrewDay } from '../shifts/on-shift.js';
+import { SettingsService } from '../settings/settings.service.js';
+import { RoverBadgesRepository, type RoverBadge } from '../set-up/rover-badges.repository.js';
+import { againReasonOf } from '../set-up/shot-validity.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 import { baseDistance } from '../common/base-distance.js';
 import { nothingMoved, type LaneSource, type Moved } from './frame.js';
 import { RIBBON_MS, laneChangeOf, laneOf, stateAt, type LaneFacts } from './live-lane.js';
 import { RosterRepository, type RosterEntry } from '../rovers/roster.repository.js';
 
+/** Check shots of yesterday still say that they are of yesterday. */
+const SHOTS_BACK_MS = 24 * 3_600_000;
 /** A rover without a crew has a lane only while it has been heard of in this time. */
 const UNASSIGNED_MS = 24 * 3_600_000;
 
@@ -35,12 +41,15 @@ export class LanesStore implements LaneSource {
   private lanes = new Map<number, LiveLane>();
   private unassigned = new Map<number, RosterEntry>();
   private day: Interval = { start: 0, end: 0 };
+  private lostMs = 0;
 
   constructor(
     @Inject(DATABASE) private readonly database: HubtackDatabase,
     private readonly roster: RosterRepository,
     private readonly fixes: FixesService,
     private readonly shifts: ShiftsService,
+    private readonly badges: RoverBadgesRepository,
+    private readonly settings: SettingsService,
     private readonly clock: Clock,
   ) {}
 
@@ -88,11 +97,17 @@ export class LanesStore implements LaneSource {
     };
     this.lanes = new Map();
     this.unassigned = new Map();
+    this.lostMs = this.settings.get().checkShotLimits.againAfterLostMinutes * 60_000;
+    const badges = this.badges.newest(this.day.start, this.day.start - SHOTS_BACK_MS);
     for (const entry of this.roster.list(now)) {
       const lastHeardAt = this.fixes.lastHeardAt(entry.roverId);
       if (entry.crewId === null && (lastHeardAt === null || lastHeardAt < now - UNASSIGNED_MS))
         this.unassigned.set(entry.roverId, entry);
-      else this.lanes.set(entry.roverId, this.liveLane(entry, crewDayOf(entry.crewId)));
+      else
+        this.lanes.set(
+          entry.roverId,
+          this.liveLane(entry, crewDayOf(entry.crewId), badges.get(entry.roverId)),
+        );
     }
     return this.movedSince(before);
   }
@@ -109,7 +124,10 @@ export class LanesStore implements LaneSource {
     const lastHeardAt = this.fixes.lastHeardAt(roverId);
     if (!entry || lastHeardAt === null || lastHeardAt < this.clock.now() - UNASSIGNED_MS) return 'none';
     this.unassigned.delete(roverId);
-    this.lanes.set(roverId, this.liveLane(entry, { basis: 'noShiftSet', onShift: [], pauses: [] }));
+    this.lanes.set(
+      roverId,
+      this.liveLane(entry, { basis: 'noShiftSet', onShift: [], pauses: [] }, undefined),
+    );
     return 'new';
   }
 
@@ -126,6 +144,33 @@ export class LanesStore implements LaneSource {
     return moved;
   }
 
+  /** Lanes whose check shot has come to count no more, or counts again with late sentences. */
+  badgesMoved(): number[] {
+    const now = this.clock.now();
+    const moved: number[] = [];
+    for (const [roverId, lane] of this.lanes) {
+      const again = this.againOf(lane, now);
+      if (again === lane.again) continue;
+      lane.again = again;
+      moved.push(roverId);
+    }
+    return moved;
+  }
+
+  private againOf({ badge, entry, latest, spans }: LiveLane, now: number): AgainReason | null {
+    if (!badge?.shot) return null;
+    const { mountPoint } = entry;
+    const rover = {
+      now,
+      dayStart: this.day.start,
+      stationId: latest?.stationId ?? null,
+      mountPoint,
+      card: badge.card,
+      spans,
+    };
+    return againReasonOf(badge.shot, rover, this.lostMs);
+  }
+
   private movedSince(before: ReadonlyMap<number, LiveLane>): Moved {
     const moved = nothingMoved();
     for (const id of [...before.keys(), ...this.lanes.keys()]) moved.whole.add(id);
@@ -134,8 +179,8 @@ export class LanesStore implements LaneSource {
     return moved;
   }
 
-  private liveLane(entry: RosterEntry, crewDay: CrewDay): LiveLane {
-    return {
+  private liveLane(entry: RosterEntry, crewDay: CrewDay, badge: RoverBadge | undefined): LiveLane {
+    const lane: LiveLane = {
       entry,
       day: this.day,
       crewDay,
@@ -145,7 +190,12 @@ export class LanesStore implements LaneSource {
       stale: true,
       measured: null,
       seen: '',
+      badge: badge ?? null,
+      again: null,
     };
+    if (badge?.shot) this.refresh(lane);
+    lane.again = this.againOf(lane, this.clock.now());
+    return lane;
   }
 
   /** Brings spans and distance up to date when something asks for the lane, not at every epoch. */

@@ -1,11 +1,13 @@
 import type { Lane, LaneChange, RibbonSpan } from '@hubtack/contracts/board/lane.js';
 import type { FixState } from '@hubtack/contracts/fixes/fix-state.js';
 import type { StateTotals } from '@hubtack/contracts/fixes/timeline.js';
+import type { AgainReason } from '@hubtack/contracts/set-up/check-shot.js';
 import { noTotals } from '@hubtack/contracts/fixes/totals.js';
 import { clip, intersect, totalMs, type Interval } from '../common/interval.js';
 import type { Epoch } from '../fixes/epoch.js';
 import { HOLD_MS, clipSpans, totalsOf, type HeardSpan } from '../fixes/timeline.js';
 import { dutyAt, type CrewDay } from '../shifts/on-shift.js';
+import type { RoverBadge } from '../set-up/rover-badges.repository.js';
 import type { RosterEntry } from '../rovers/roster.repository.js';
 
 /** How far back the ribbon reaches. */
@@ -19,6 +21,10 @@ export interface LaneFacts {
   spans: readonly HeardSpan[];
   latest: Epoch | null;
   baseDistanceM: number | null;
+  /** Set-up card and check shot; null when there is neither. */
+  badge: RoverBadge | null;
+  /** Why the check shot does not count any more. */
+  again: AgainReason | null;
 }
 
 /** State at an instant, and since when. A rover is silent from H after its newest epoch on. */
@@ -88,7 +94,7 @@ export function laneChangeOf(facts: LaneFacts, now: number, withRibbon: boolean)
 }
 
 export function laneOf(facts: LaneFacts, now: number): Lane {
-  const { entry } = facts;
+  const { entry, badge } = facts;
   return {
     ...laneChangeOf(facts, now, false),
     ribbon: ribbonOf(facts, now),
@@ -98,8 +104,15 @@ export function laneOf(facts: LaneFacts, now: number): Lane {
     crewPhone: entry.crewPhone,
     siteName: entry.siteName,
     mountPoint: entry.mountPoint,
-    setUp: null,
-    checkShot: null,
+    setUp: badge?.card ? { at: badge.card.at, by: badge.card.by } : null,
+    checkShot: badge?.shot
+      ? {
+          at: badge.shot.at,
+          horizontalMm: Math.round(badge.shot.horizontalM * 1000),
+          passed: badge.shot.passed,
+          again: facts.again,
+        }
+      : null,
     pauses: clip(facts.crewDay.pauses, { start: now - RIBBON_MS, end: now }),
   };
 }

@@ -19,10 +19,11 @@ export class ControlPointsController {
   constructor(private readonly controlPoints: ControlPointsService) {}
 
   @Get()
-  @AllowRoles('dispatcher', 'technician')
+  @AllowRoles('dispatcher', 'technician', 'crewChief')
   @ApiOkResponse({ standardSchema: controlPointList })
-  list(): ControlPoint[] {
-    return this.controlPoints.list();
+  list(@CurrentViewer() viewer: Viewer): ControlPoint[] {
+    const all = this.controlPoints.list();
+    return viewer.role === 'crewChief' ? all.filter(({ active }) => active) : all;
   }
 
   @Post()

@@ -22,6 +22,6 @@ import { TrackStore } from './track.store.js';
     FixesService,
     RoverAccessService,
   ],
-  exports: [CommitQueue, FixesService, FiguresToDo],
+  exports: [CommitQueue, FixesService, RoverAccessService, FiguresToDo],
 })
 export class FixesModule {}

@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import { id, instantText, optionalText } from '../common.js';
 import { correctionFormat } from '../corrections/correction-source.js';
+import { fixState } from '../fixes/fix-state.js';
 
 /** What the pole height reaches up to. */
 export const measuringPoints = ['mountBottom', 'phaseCentre'] as const;
@@ -76,3 +77,29 @@ export const setUpCard = z.object({
 export type SetUpCard = z.infer<typeof setUpCard>;
 export const setUpCardList = z.object({ cards: z.array(setUpCard) });
 export const setUpCardQuery = z.object({ roverId: z.coerce.number().int().positive() });
+
+/** What a new card starts from. */
+export const setUpStart = z.object({
+  card: setUpCard.nullable().describe('The newest there is'),
+  choices: z.array(z.object({ id, name: z.string(), mountPoint: z.string() })),
+  correctionSourceId: id.nullable().describe('What the office has set for the rover'),
+  toleranceProfile: z.string().describe('The firm’s'),
+});
+export type SetUpStart = z.infer<typeof setUpStart>;
+
+export const groundQuery = z.object({
+  roverId: z.coerce.number().int().positive(),
+  poleHeightM: z.coerce.number().min(0).max(10),
+  antennaOffsetM: z.coerce.number().min(-0.5).max(1).default(0),
+  measuringPoint: measuringPoint.default('mountBottom'),
+});
+export type GroundQuery = z.infer<typeof groundQuery>;
+
+/** Height of the ground under the pole by the newest sentence; all null before there is one. */
+export const ground = z.object({
+  at: instantText.nullable(),
+  state: fixState,
+  aboveGeoidM: z.number().nullable(),
+  aboveEllipsoidM: z.number().nullable(),
+});
+export type Ground = z.infer<typeof ground>;
