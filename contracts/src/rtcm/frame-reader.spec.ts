@@ -1,5 +1,6 @@
 import { assert, constantFrom, integer, property, uint8Array, array } from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { crc24q } from './crc24q.js';
 import { RtcmFrameReader } from './frame-reader.js';
 import { frameOf } from './frame-writer.js';
 
@@ -113,6 +114,13 @@ describe('RTCM 3 frames', () => {
     const frame = frameOf(Uint8Array.of(0x3e, 0xd0, 1));
     frame[1]! |= 4;
     expect(read(frame)).toEqual({ payloads: [], badCrc: 0, noise: frame.length });
+    // Nor with a right CRC: as a length they would be 1027.
+    const long = new Uint8Array(1033);
+    long.set([0xd3, 4, 3, 0x3e, 0xd0]);
+    const crc = crc24q(long, 0, 1030);
+    long.set([crc >> 16, (crc >> 8) & 0xff, crc & 0xff], 1030);
+    expect(crc24q(long)).toBe(0);
+    expect(read(long)).toEqual({ payloads: [], badCrc: 0, noise: 1033 });
   });
   it.each([0, 1])('of %d bytes have no message number, and are passed over', (length) => {
     const filler = frameOf(new Uint8Array(length));

@@ -1,6 +1,6 @@
 import { unsignedAt } from './bits.js';
 import { crc24q } from './crc24q.js';
-import { CRC_BYTES, HEAD_BYTES, MAX_PAYLOAD_BYTES, PREAMBLE } from './frame-writer.js';
+import { CRC_BYTES, HEAD_BYTES, PREAMBLE } from './frame-writer.js';
 
 export interface FrameHandlers {
   /** A frame whose CRC is right. The payload is only valid during the call. */
@@ -13,7 +13,6 @@ export interface FrameHandlers {
 
 /** Message numbers have twelve bits. */
 const LEAST_PAYLOAD_BYTES = 2;
-const LONGEST = HEAD_BYTES + MAX_PAYLOAD_BYTES + CRC_BYTES;
 
 /**
  * Finds RTCM 3 frames in a stream of bytes, however it is cut. 0xD3 stands inside payloads too, so only a right CRC makes a
@@ -72,11 +71,10 @@ export class RtcmFrameReader {
   private sizeAt(bytes: Uint8Array, at: number): number | 'unknown' | null {
     if (bytes[at] !== PREAMBLE) return null;
     if (at + 1 >= bytes.length) return 'unknown';
-    // The six reserved bits are 0.
+    // The six reserved bits are 0; the ten of the length follow, so that no frame is longer than 1029 bytes.
     if (bytes[at + 1]! > 3) return null;
     if (at + 2 >= bytes.length) return 'unknown';
-    const size = HEAD_BYTES + ((bytes[at + 1]! << 8) | bytes[at + 2]!) + CRC_BYTES;
-    return size <= LONGEST ? size : null;
+    return HEAD_BYTES + ((bytes[at + 1]! << 8) | bytes[at + 2]!) + CRC_BYTES;
   }
 
   private hand(payload: Uint8Array): void {

@@ -81,10 +81,11 @@ describe('a caster', () => {
   });
   it('refuses a wrong login, and sends frames of the base with a right one', async () => {
     await start();
-    const refused = (
-      await ask(['GET /TANF00 HTTP/1.0', `Authorization: Basic ${btoa('pennywort:word')}`])
-    ).toString();
-    expect(refused).toMatch(/^HTTP\/1\.1 401 .*WWW-Authenticate: Basic realm="TANF00"/s);
+    for (const wrong of ['pennywort:word', 'pennyworth:words', 'pennywort', ':words']) {
+      const refused = (await ask(['GET /TANF00 HTTP/1.0', `Authorization: Basic ${btoa(wrong)}`])).toString();
+      expect(refused).toMatch(/^HTTP\/1\.1 401 .*WWW-Authenticate: Basic realm="TANF00"/s);
+    }
+    expect((await ask(['GET /TANF00 HTTP/1.0'])).toString()).toMatch(/^HTTP\/1\.1 401 /);
     const bytes = await ask(['GET /TANF00 HTTP/1.0', basic], ({ length }) => length > 3000);
     expect(bytes.toString('latin1')).toMatch(/^ICY 200 OK\r\n\r\n/);
     const { numbers, stations } = framesIn(bytes);
@@ -97,6 +98,10 @@ describe('a caster', () => {
     });
     expect(caster!.requests.map(({ user, outcome }) => [user, outcome])).toEqual([
       ['pennywort', 'refused'],
+      ['pennyworth', 'refused'],
+      ['pennywort', 'refused'],
+      ['', 'refused'],
+      [null, 'refused'],
       ['pennywort', 'stream'],
     ]);
     expect(JSON.stringify(caster!.requests)).not.toContain('words');
