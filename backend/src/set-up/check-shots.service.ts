@@ -121,7 +121,8 @@ export class CheckShotsService {
       measure.from === 'typed' ? groundOfTyped(measure, point) : groundOfMean(mean!, card, point);
     const result = shotResult(ground, mean, card, point, checkShotLimits);
     if (result.horizontalM > FARTHEST_M) {
-      const far = `${result.horizontalM < 10_000 ? `${Math.round(result.horizontalM)} m` : `${Math.round(result.horizontalM / 1000)} km`}`;
+      const metres = Math.round(result.horizontalM);
+      const far = metres < 10_000 ? `${metres} m` : `${Math.round(metres / 1000)} km`;
       throw bad(
         '/controlPointId',
         `That is ${far} from ${point.name}: is it this control point, and this datum?`,
