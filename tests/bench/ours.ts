@@ -51,6 +51,7 @@ export class Ours {
         PORT: String(port),
         NMEA_TCP_PORT: String(tcpPort),
         DATABASE_FILE: databaseFile,
+        UPLOADS_DIR: join(folder, 'uploads'),
         ...options.environment,
       },
     });

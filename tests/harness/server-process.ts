@@ -43,6 +43,7 @@ export class ServerProcess {
         PORT: String(this.port),
         NMEA_TCP_PORT: String(this.tcpPort),
         DATABASE_FILE: this.databaseFile,
+        UPLOADS_DIR: join(this.folder, 'uploads'),
         ...this.environment,
       },
     });

@@ -44,6 +44,7 @@ export async function startServer(environment: Record<string, string> = {}): Pro
     NMEA_TCP_PORT: '0',
     LOG_LEVEL: 'silent',
     DATABASE_FILE: databaseFile,
+    UPLOADS_DIR: join(folder, 'uploads'),
     ...environment,
   });
   const clock = new MovingClock();
