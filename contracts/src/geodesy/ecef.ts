@@ -33,14 +33,15 @@ export function ecefOf({ latitude, longitude, heightM }: Geodetic): Ecef {
 
 /**
  * The same backwards: Bowring's formula (Survey Review XXIII 181, 1976; EPSG Guidance Note 7-2, method 9602), its parametric
- * latitude made better until it stands still. The height is taken along the normal, which also holds at the poles. Within 43 km of
- * the centre, where normals cross and no place is meant (a base that does not know its own sends zeros), the latitude is still one.
+ * latitude made better: a second round is enough from the ground up to satellites, a third far below as well. The height is taken
+ * along the normal, which also holds at the poles. Within 43 km of the centre, where normals cross and no place is meant (a base
+ * that does not know its own sends zeros), the latitude is still one.
  */
 export function geodeticOf({ x, y, z }: Ecef): Geodetic {
   const p = Math.hypot(x, y);
   let beta = Math.atan2(z * A, p * B);
   let phi = 0;
-  for (let round = 0; round < 5; round++) {
+  for (let round = 0; round < 3; round++) {
     const outwards = Math.max(0, p - E2 * A * Math.cos(beta) ** 3);
     phi = Math.atan2(z + EP2 * B * Math.sin(beta) ** 3, outwards);
     beta = Math.atan2((1 - F) * Math.sin(phi), Math.cos(phi));
