@@ -24,7 +24,7 @@ module.exports = {
       comment: 'The domain is functions over plain values: no framework, no tables.',
       severity: 'error',
       from: {
-        path: '^backend/src/(fixes/(timeline|dating|epoch\\.assembler|late-epochs|epoch)|shifts/(on-shift|crew-shifts|shift-steps)|lost-fixes/(detector|reconcile|chattering|corrections-watch|shared-cause|diagnosis|figures|flag-end|lost-fix\\.view)|notices/(notice-policy|notice-tellings|notice-day|notice-words)|mail/smtp-outcome|weekly/(part-figures|tolerance|week-figures|week-sentence)|sheets/(csv|weekly-csv|sheet-words|sheet|sheet-text|sheet-html|state-bar|weekly-mail|daily-sheet|sheet-times)|board/(live-lane|frame)|common/(interval|local-day|base-distance|statistics)|ingest/(time-limits|epoch\\.json|sentence\\.batch))\\.ts$',
+        path: '^backend/src/(fixes/(timeline|dating|epoch\\.assembler|late-epochs|epoch)|shifts/(on-shift|crew-shifts|shift-steps)|lost-fixes/(detector|reconcile|chattering|corrections-watch|shared-cause|diagnosis|figures|evidence-window|flag-end|lost-fix\\.view)|notices/(notice-policy|notice-tellings|notice-day|notice-words)|mail/smtp-outcome|weekly/(part-figures|tolerance|week-figures|week-sentence)|sheets/(csv|weekly-csv|sheet-words|sheet|sheet-text|sheet-html|state-bar|weekly-mail|daily-sheet|sheet-times)|board/(live-lane|frame)|common/(interval|local-day|base-distance|statistics)|ingest/(time-limits|epoch\\.json|sentence\\.batch)|logs/(analyse-log|first-day|epoch-columns|log-figures|log-losses|part-sink|rejected-lines|refusals|log-notes|log-kind))\\.ts$',
       },
       to: { path: '(@nestjs|drizzle-orm|better-sqlite3|^drizzle/)', dependencyTypesNot: ['type-only'] },
     },

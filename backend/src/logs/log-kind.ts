@@ -1,7 +1,7 @@
 const startsWith = (head: Uint8Array, ...bytes: number[]): boolean =>
   head.length >= bytes.length && bytes.every((byte, at) => head[at] === byte);
 const textAt = (head: Uint8Array, at: number, text: string): boolean =>
-  [...text].every((character, index) => head[at + index] === character.charCodeAt(0));
+  Buffer.from(text, 'latin1').every((byte, index) => head[at + index] === byte);
 
 /** What many logs that are none begin with (file signatures as their own specifications give them). */
 const signatures: [is: (head: Uint8Array) => boolean, words: string][] = [

@@ -27,9 +27,9 @@ export class LogThread {
         else if (message.kind !== 'epochs') outcome = message;
         else
           store(message).then(
-            () => this.worker.postMessage({ kind: 'stored' } satisfies ToThread),
+            () => this.worker.postMessage({ kind: 'stored' } satisfies ToThread, []),
             (error: unknown) => {
-              reject(error as Error);
+              reject(error);
               void this.stop();
             },
           );

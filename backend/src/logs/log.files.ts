@@ -47,7 +47,8 @@ export class LogFiles {
     } finally {
       await file.close();
       const folder = await open(this.folder, 'r');
-      await folder.sync().finally(() => folder.close());
+      await folder.sync();
+      await folder.close();
     }
   }
 

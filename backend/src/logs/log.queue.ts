@@ -2,8 +2,8 @@ import {
   Inject,
   Injectable,
   Logger,
+  type BeforeApplicationShutdown,
   type OnApplicationBootstrap,
-  type OnApplicationShutdown,
 } from '@nestjs/common';
 import type { LogHistory as HistoryCounts } from '@hubtack/contracts/logs/log.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
@@ -22,7 +22,7 @@ import { LogsRepository, type SmallLogRow } from './logs.repository.js';
 
 /** Reads logs one after the other. What had not been read when the server stopped is read again: its upload was answered for. */
 @Injectable()
-export class LogQueue implements OnApplicationBootstrap, OnApplicationShutdown {
+export class LogQueue implements OnApplicationBootstrap, BeforeApplicationShutdown {
   private readonly logger = new Logger(LogQueue.name);
   private reading: { id: number; thread: LogThread } | null = null;
   private running: Promise<void> | null = null;
@@ -50,7 +50,8 @@ export class LogQueue implements OnApplicationBootstrap, OnApplicationShutdown {
     this.wake();
   }
 
-  async onApplicationShutdown(): Promise<void> {
+  /** Before the storage closes: what it then refuses must not fail a log. */
+  async beforeApplicationShutdown(): Promise<void> {
     this.stopping = true;
     await this.reading?.thread.stop();
     await this.running;
@@ -106,7 +107,7 @@ export class LogQueue implements OnApplicationBootstrap, OnApplicationShutdown {
     } catch (error) {
       if (this.stopping) return;
       this.logger.error({ err: error, logId: row.id }, 'a log could not be read');
-      outcome = { kind: 'failed', problem: 'It could not be read: something went wrong here.' };
+      outcome = { kind: 'failed', problem: problemOf(error) };
     } finally {
       this.reading = null;
     }
@@ -164,4 +165,12 @@ export class LogQueue implements OnApplicationBootstrap, OnApplicationShutdown {
   private fail(id: number, problem: string): void {
     this.repository.change(id, { status: 'failed', problem, file: null });
   }
+}
+
+function problemOf(error: unknown): string {
+  const code = String((error as { code?: unknown } | null)?.code);
+  if (code.startsWith('SQLITE_FULL') || code.startsWith('SQLITE_IOERR'))
+    return 'The server cannot write to its disk. Upload it again later: what has entered the history is not entered twice.';
+  if (code === 'ERR_WORKER_OUT_OF_MEMORY') return 'It needs more memory to be read than a log may have.';
+  return 'It could not be read to its end: something went wrong here.';
 }

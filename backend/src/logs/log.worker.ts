@@ -13,7 +13,7 @@ const MOST_EPOCHS = 500;
 const FINDING = 0.25;
 
 const task = workerData as LogTask;
-const tell = (message: FromThread): void => parentPort!.postMessage(message);
+const tell = (message: FromThread): void => parentPort!.postMessage(message, []);
 
 /** Reads the file from its beginning; the bytes are good until the next are asked for. */
 function* chunks(progressFrom: number, progressTo: number): Generator<Uint8Array> {
