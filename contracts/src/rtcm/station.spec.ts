@@ -33,3 +33,8 @@ it('any other message, and one that is cut, is none', () => {
   expect(readStation(Uint8Array.of(0x43, 0x50, 0, 0))).toBeNull();
   expect(readStation(new Uint8Array(0))).toBeNull();
 });
+it('the ends of 38 bits keep their sign', () => {
+  const [least, most] = [-(2 ** 37) / 10_000, (2 ** 37 - 1) / 10_000];
+  const far = { stationId: 4095, isVirtual: true, x: least, y: most, z: -0.0001, antennaHeightM: 6.5535 };
+  expect(readStation(writeStation(far))).toEqual(far);
+});
