@@ -18,14 +18,16 @@ export class Child {
   private constructor(
     private readonly process: ChildProcess,
     readonly port: number,
+    /** All that it told at its start. */
+    readonly told: object,
   ) {}
 
   /** Starts a program of this folder, which tells its port. */
   static async start(program: string, args: string[]): Promise<Child> {
     const file = fileURLToPath(new URL(program, import.meta.url));
     const process = fork(file, args, { stdio: ['ignore', 'ignore', 'inherit', 'ipc'], execArgv: NODE_FLAGS });
-    const { port } = await Child.answer<{ port: number }>(process);
-    return new Child(process, port);
+    const told = await Child.answer<{ port: number }>(process);
+    return new Child(process, told.port, told);
   }
 
   ask<T>(message: object): Promise<T> {

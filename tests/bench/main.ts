@@ -3,6 +3,7 @@ import { diagnosis } from './diagnosis.js';
 import { flag } from './flag.js';
 import { ingestAnswer, ingestHttp1, ingestHttp60, capacity } from './ingest-http.js';
 import { ingestTcp } from './ingest-tcp.js';
+import { logs } from './logs.js';
 import { notices } from './notices.js';
 import { printRow, type Row } from './report.js';
 import { fanOut, freshness, stalled } from './stream.js';
@@ -26,6 +27,7 @@ const benches: Record<string, () => Promise<Row[]>> = {
   diagnosis: () => diagnosis(seed),
   notices: () => notices(seed),
   flag,
+  logs,
   weekly,
   capacity,
 };

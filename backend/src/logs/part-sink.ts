@@ -7,11 +7,11 @@ import type { HeardSpan, TimelineSpan } from '../fixes/timeline.js';
 const MOST_TRANSITIONS = 2000;
 /** More than a ribbon has room for. */
 const MOST_SPANS = 2000;
-const BUCKETS = 1000;
+const BUCKETS = MOST_SPANS;
 
 /**
  * Takes the heard spans of a log in order and makes of them, as `partition` does, what fills [first, last) without a gap: totals and changes, all of
- * them counted, and spans to draw, at most MOST_SPANS: where there are more, a thousand equal pieces, each in the state that most of it is in.
+ * them counted, and spans to draw, at most MOST_SPANS: where there are more, so many equal pieces, each in the state that most is left to be shown of.
  */
 export class PartSink {
   readonly totals: StateTotals = noTotals();
@@ -40,9 +40,14 @@ export class PartSink {
   drawn(): TimelineSpan[] {
     if (this.spans) return this.spans;
     const drawn: TimelineSpan[] = [];
+    // What a piece cannot show is owed by the next ones: states keep their shares, short ones too.
+    const owed = new Float64Array(fixStates.length);
     for (let bucket = 0; bucket < BUCKETS; bucket++) {
-      const shares = this.buckets.subarray(bucket * fixStates.length, (bucket + 1) * fixStates.length);
-      const state = fixStates[shares.indexOf(Math.max(...shares))]!;
+      for (let place = 0; place < fixStates.length; place++)
+        owed[place]! += this.buckets[bucket * fixStates.length + place]!;
+      const place = owed.indexOf(Math.max(...owed));
+      owed[place]! -= this.bucketMs;
+      const state = fixStates[place]!;
       const end = this.first + Math.round((bucket + 1) * this.bucketMs);
       const before = drawn.at(-1);
       if (before?.state === state) before.end = end;
