@@ -141,8 +141,13 @@ export class FrameReader {
       }
       sum ^= byte;
     }
-    this.carry = bytes.slice(dollar);
+    this.keep(bytes, dollar);
     return -1;
+  }
+
+  /** A copy, which `slice` of Node's own Buffer is not: whoever reads a file fills the same bytes again. */
+  private keep(bytes: Uint8Array, dollar: number): void {
+    this.carry = new Uint8Array(bytes.subarray(dollar));
   }
 
   private readChecksum(
@@ -170,7 +175,7 @@ export class FrameReader {
     }
     const needed = high >= 0 ? star + 2 : star + 1;
     if (needed >= bytes.length) {
-      this.carry = bytes.slice(dollar);
+      this.keep(bytes, dollar);
       return -1;
     }
     if (hasAddress(bytes, dollar + 1, star))
