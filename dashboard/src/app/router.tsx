@@ -49,6 +49,8 @@ export const router = createBrowserRouter([
         path: '/corrections/:id/mount-points',
         element: page(() => import('../features/corrections/mount-points-page')),
       },
+      { path: '/logs', element: page(() => import('../features/logs/logs-page')) },
+      { path: '/logs/:id', element: page(() => import('../features/logs/log-page')) },
       {
         path: '/sentence-reader',
         element: page(() => import('../features/sentence-reader/sentence-reader-page')),
