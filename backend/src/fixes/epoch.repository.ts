@@ -75,6 +75,23 @@ export class EpochRepository {
     );
   }
 
+  /** What tolerance is judged by, of one rover in [from, to), in order of time: a third of what whole epochs cost, and days of it are read. */
+  judged(
+    roverId: number,
+    from: number,
+    to: number,
+  ): Pick<Epoch, 'time' | 'quality' | 'ageMs' | 'hdop' | 'satellites'>[] {
+    const { time, quality, ageMs, hdop, satellites } = epochs;
+    return this.bySlots(from, to, (slots) =>
+      this.database
+        .select({ time, quality, ageMs, hdop, satellites })
+        .from(epochs)
+        .where(this.window(roverId, slots, from, to))
+        .orderBy(epochs.slot, epochs.time)
+        .all(),
+    );
+  }
+
   /** Whole epochs of one rover in [from, to), in order of time. */
   list(roverId: number, from: number, to: number): Epoch[] {
     return this.bySlots(from, to, (slots) =>

@@ -64,6 +64,11 @@ export class FixesService {
     return to > from ? this.epochRows.list(roverId, from, to) : [];
   }
 
+  /** What tolerance is judged by, of the epochs in [from, to), in order of time. */
+  judgedEpochs(roverId: number, from: number, to: number): ReturnType<EpochRepository['judged']> {
+    return to > from ? this.epochRows.judged(roverId, from, to) : [];
+  }
+
   /** Where a rover was, once in each half minute. */
   places(roverId: number, from: number, to: number): { time: number; latitude: number; longitude: number }[] {
     return to > from ? this.epochRows.places(roverId, from, to) : [];

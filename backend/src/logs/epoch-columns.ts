@@ -6,6 +6,8 @@ const ABSENT = -1;
 /** Beside the quality, one digit: a base station id was given. */
 const HAS_STATION = 16;
 
+const known = (value: number): number | null => (value === ABSENT ? null : value);
+
 /** One chunk: a hundred megabytes of sentences are a million epochs, and objects of them would be hundreds of megabytes. */
 class Chunk {
   readonly time = new Float64Array(CHUNK);
@@ -46,7 +48,8 @@ export class EpochColumns {
 
   /** Puts what was added in order; answers how many were of an instant that was there already. */
   settle(): number {
-    const order = Uint32Array.from({ length: this.added }, (_, index) => index);
+    const order = new Uint32Array(this.added);
+    for (let at = 0; at < order.length; at++) order[at] = at;
     // Places break ties, so that the first stays first.
     if (!this.isOrdered) order.sort((a, b) => this.timeAt(a) - this.timeAt(b) || a - b);
     let count = 0;
@@ -61,27 +64,43 @@ export class EpochColumns {
     return this.timeAt(this.order![index]!);
   }
 
-  /** Without the station id itself: see `hasStation`. */
-  epoch(index: number): EvidenceEpoch {
+  quality(index: number): number {
     const at = this.order![index]!;
-    const chunk = this.chunks[Math.floor(at / CHUNK)]!;
-    const place = at % CHUNK;
-    const absent = (value: number) => (value === ABSENT ? null : value);
-    const hdop = absent(chunk.hdop[place]!);
-    return {
-      time: chunk.time[place]!,
-      quality: chunk.quality[place]! & ~HAS_STATION,
-      satellites: absent(chunk.satellites[place]!),
-      ageMs: absent(chunk.ageMs[place]!),
-      // Single precision keeps seven digits; receivers write three or four.
-      hdop: hdop === null ? null : Number(hdop.toPrecision(6)),
-      stationId: null,
-    };
+    return this.chunkOf(at).quality[at % CHUNK]! & ~HAS_STATION;
   }
 
   hasStation(index: number): boolean {
     const at = this.order![index]!;
-    return (this.chunks[Math.floor(at / CHUNK)]!.quality[at % CHUNK]! & HAS_STATION) !== 0;
+    return (this.chunkOf(at).quality[at % CHUNK]! & HAS_STATION) !== 0;
+  }
+
+  satellites(index: number): number | null {
+    const at = this.order![index]!;
+    return known(this.chunkOf(at).satellites[at % CHUNK]!);
+  }
+
+  ageMs(index: number): number | null {
+    const at = this.order![index]!;
+    return known(this.chunkOf(at).ageMs[at % CHUNK]!);
+  }
+
+  hdop(index: number): number | null {
+    const at = this.order![index]!;
+    const hdop = known(this.chunkOf(at).hdop[at % CHUNK]!);
+    // Single precision keeps seven digits; receivers write three or four.
+    return hdop === null ? null : Number(hdop.toPrecision(6));
+  }
+
+  /** Without the station id itself: see `hasStation`. */
+  epoch(index: number): EvidenceEpoch {
+    return {
+      time: this.time(index),
+      quality: this.quality(index),
+      satellites: this.satellites(index),
+      ageMs: this.ageMs(index),
+      hdop: this.hdop(index),
+      stationId: null,
+    };
   }
 
   /** Epochs in [start, end). */
@@ -92,8 +111,12 @@ export class EpochColumns {
     return found;
   }
 
+  private chunkOf(at: number): Chunk {
+    return this.chunks[Math.floor(at / CHUNK)]!;
+  }
+
   private timeAt(at: number): number {
-    return this.chunks[Math.floor(at / CHUNK)]!.time[at % CHUNK]!;
+    return this.chunkOf(at).time[at % CHUNK]!;
   }
 
   private firstFrom(time: number): number {

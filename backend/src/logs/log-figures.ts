@@ -49,18 +49,24 @@ export function figuresOf(columns: EpochColumns): LogFigures {
   let correctedAt: number | null = null;
   let tail: Tail | null = null;
   for (let index = 0; index < count; index++) {
-    const epoch = columns.epoch(index);
-    const next: Step = step(tail, epoch);
+    const [time, quality] = [columns.time(index), columns.quality(index)];
+    const next: Step = step(tail, { time, quality });
     if (next.closed) close(next.closed);
     tail = next.tail;
-    if (epoch.satellites !== null) satellites[epoch.satellites]!++;
-    if (epoch.ageMs !== null) maxAgeMs = Math.max(maxAgeMs ?? 0, epoch.ageMs);
-    if (correctedAt === null && (epoch.quality === 4 || epoch.quality === 5 || columns.hasStation(index)))
-      correctedAt = epoch.time;
-    if (points.wants(epoch.time)) {
-      const { time: at, satellites: used, ageMs, hdop } = epoch;
-      points.add({ at, state: fixStateOfQuality(epoch.quality), satellites: used, ageMs, hdop });
-    }
+    const used = columns.satellites(index);
+    if (used !== null) satellites[used]!++;
+    const ageMs = columns.ageMs(index);
+    if (ageMs !== null) maxAgeMs = Math.max(maxAgeMs ?? 0, ageMs);
+    if (correctedAt === null && (quality === 4 || quality === 5 || columns.hasStation(index)))
+      correctedAt = time;
+    if (points.wants(time))
+      points.add({
+        at: time,
+        state: fixStateOfQuality(quality),
+        satellites: used,
+        ageMs,
+        hdop: columns.hdop(index),
+      });
   }
   close(spanOfTail(tail!));
   const { totals, transitions, moreTransitions } = parts;

@@ -199,7 +199,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
   }
 
   private writeWithin(roverId: number, window: Interval): void {
-    const epochs = this.fixes.epochs(roverId, window.start - HOLD_MS, window.end);
+    const epochs = this.fixes.judgedEpochs(roverId, window.start - HOLD_MS, window.end);
     const first = epochs[0]?.time;
     // Of what raw epochs do not tell, or no longer, what was worked out stays.
     if (first === undefined) return;
