@@ -25,6 +25,7 @@ import {
   type DemoCrew,
 } from './demo-data.js';
 import { epochsOfShift, type TimedQuality } from './demo-past.js';
+import { seedSetUp, type DemoRover } from './demo-set-up.js';
 
 export interface DemoSpan {
   state: 'fixed' | 'float' | 'code' | 'none';
@@ -102,6 +103,7 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
     addUser('Dispatcher', 'dispatcher', 'dispatcher', null);
     addUser('Technician', 'technician', 'technician', null);
     const receiver = 'dual-frequency receiver';
+    const setUp: DemoRover[] = [];
     for (const crew of demoCrews) {
       const { name, phone, hourlyRate } = crew;
       const crewId = tx
@@ -121,7 +123,8 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
         tx.insert(roverAssignments).values({ roverId, crewId, startAt: createdAt }).run();
         return roverId;
       });
-      for (const shift of shiftsOf(random, seed.now)) {
+      const list = shiftsOf(random, seed.now);
+      for (const shift of list) {
         const shiftId = tx
           .insert(shifts)
           .values({ crewId, startAt: shift.start, endAt: shift.open ? null : shift.end })
@@ -133,6 +136,16 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
             .run();
         for (const roverId of roverIds) {
           const rows = spansOfShift(random, crew, shift, seed.toSpans).map((span) => ({ roverId, ...span }));
+          if (shift.open)
+            setUp.push({
+              crewName: name,
+              crewId,
+              roverId,
+              mountPoint: crew.rovers[roverIds.indexOf(roverId)]!.mountPoint,
+              lastShiftAt: list.at(-2)!.start,
+              shiftAt: shift.start,
+              spans: rows,
+            });
           if (rows.length === 0) continue;
           tx.insert(spans).values(rows).run();
           const within = rows.filter(
@@ -145,6 +158,7 @@ export function seedDemoFirm(database: HubtackDatabase, seed: DemoSeed): void {
         }
       }
     }
+    seedSetUp(tx, setUp, sourceIds, seed.now);
     for (const label of demoSpares)
       tx.insert(rovers)
         .values({ label, receiver, serial: `PW-${label.slice(2)}` })

@@ -22,11 +22,11 @@ const METRES_A_DEGREE = 111_320;
 
 function simulatedRover(
   rover: FleetRover,
-  { behaviours, northM = 0 }: CrewStory,
+  { behaviours, stands, northM = 0 }: CrewStory,
   seed: number,
 ): SimulatedRover {
   const site = { latitude: rover.latitude + northM / METRES_A_DEGREE, longitude: rover.longitude };
-  return new SimulatedRover(site, behaviours, seed);
+  return new SimulatedRover(site, behaviours, seed, stands);
 }
 
 /** Runs a fleet: each rover sends once a simulated second, on the second, as receivers do. */

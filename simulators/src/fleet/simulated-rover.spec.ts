@@ -43,6 +43,17 @@ describe('simulated rovers', () => {
       expect(Math.abs(epoch!.latitude! - site.latitude)).toBeLessThan(0.005);
     }
   });
+  it('one that stands stays within its noise, so that its pole can be checked', () => {
+    const { behaviours, stands } = scenarios.demo(1)(2);
+    const rover = new SimulatedRover(site, behaviours, 1, stands);
+    for (let second = 0; second < 300; second++) {
+      const { sentences } = readText(rover.sentencesAt(START + second * 1000, second));
+      const epoch = sentences.find(({ type }) => type === 'gga') as GgaSentence;
+      if (epoch.quality !== 4) continue;
+      expect(Math.abs(epoch.latitude! - site.latitude) * 111_320).toBeLessThan(0.01);
+      expect(Math.abs(epoch.altitudeM! - 42)).toBeLessThan(0.01);
+    }
+  });
   it('trees: satellites fall and the fix goes while corrections stay good, then both come back', () => {
     const epochs = run([steady(), trees(60, 60)], 180);
     const under = epochs.slice(70, 118) as GgaSentence[];

@@ -23,6 +23,7 @@ export class SimulatedRover {
     private readonly site: { latitude: number; longitude: number },
     private readonly behaviours: readonly Behaviour[],
     seed: number,
+    private readonly stands = false,
   ) {
     this.random = randomOf(seed);
     this.heading = uniformInt(this.random, 0, 359);
@@ -31,7 +32,7 @@ export class SimulatedRover {
   /** Sentences of the instant `time` (ms UTC), `seconds` after the start; empty when it sends nothing. */
   sentencesAt(time: number, seconds: number): string {
     const state = stateAt(this.behaviours, seconds, this.random);
-    this.walk();
+    if (!this.stands) this.walk();
     if (state.quiet) return '';
     const noise = scatterM[state.quality] ?? 0;
     const offset = () => (chance(this.random) + chance(this.random) - 1) * noise;

@@ -20,6 +20,8 @@ export interface CrewStory {
   marks: Marks | null;
   /** Metres north of where its keys say it works. */
   northM?: number;
+  /** Its pole stays on one mark; otherwise the crew walks about. */
+  stands?: boolean;
 }
 
 /** Stories of the crews of a fleet, by number. */
@@ -38,7 +40,7 @@ const plain =
  * Something happens within the first minute: one under trees, one without corrections, one quiet, one never fixed. After four minutes the
  * base station of the first two fails for both.
  */
-const demo = plain((crew) => {
+const demoBehaviours = (crew: number): Behaviour[] => {
   const rounds = Array.from({ length: 200 }, (_, round) => round * 420);
   const baseFails = rounds.map((at) => correctionsStopped(at + 240, 110));
   switch (crew % 6) {
@@ -55,6 +57,13 @@ const demo = plain((crew) => {
     default:
       return [steady(4), unrest(900)];
   }
+};
+/** The third crew's pole stands on a control point, for check shots. */
+const demo: Scenario = () => (crew) => ({
+  behaviours: demoBehaviours(crew),
+  losses: [],
+  marks: null,
+  stands: crew % 6 === 2,
 });
 
 /** Every crew loses its fix for one cause, one crew a little after the other. */
