@@ -40,6 +40,7 @@ interface LiveLane extends LaneFacts {
 export class LanesStore implements LaneSource {
   private lanes = new Map<number, LiveLane>();
   private unassigned = new Map<number, RosterEntry>();
+  private badges: ReadonlyMap<number, RoverBadge> = new Map();
   private day: Interval = { start: 0, end: 0 };
   private lostMs = 0;
 
@@ -48,7 +49,7 @@ export class LanesStore implements LaneSource {
     private readonly roster: RosterRepository,
     private readonly fixes: FixesService,
     private readonly shifts: ShiftsService,
-    private readonly badges: RoverBadgesRepository,
+    private readonly badgeRows: RoverBadgesRepository,
     private readonly settings: SettingsService,
     private readonly clock: Clock,
   ) {}
@@ -98,16 +99,12 @@ export class LanesStore implements LaneSource {
     this.lanes = new Map();
     this.unassigned = new Map();
     this.lostMs = this.settings.get().checkShotLimits.againAfterLostMinutes * 60_000;
-    const badges = this.badges.newest(this.day.start, this.day.start - SHOTS_BACK_MS);
+    this.badges = this.badgeRows.newest(this.day.start, this.day.start - SHOTS_BACK_MS);
     for (const entry of this.roster.list(now)) {
       const lastHeardAt = this.fixes.lastHeardAt(entry.roverId);
       if (entry.crewId === null && (lastHeardAt === null || lastHeardAt < now - UNASSIGNED_MS))
         this.unassigned.set(entry.roverId, entry);
-      else
-        this.lanes.set(
-          entry.roverId,
-          this.liveLane(entry, crewDayOf(entry.crewId), badges.get(entry.roverId)),
-        );
+      else this.lanes.set(entry.roverId, this.liveLane(entry, crewDayOf(entry.crewId)));
     }
     return this.movedSince(before);
   }
@@ -124,10 +121,7 @@ export class LanesStore implements LaneSource {
     const lastHeardAt = this.fixes.lastHeardAt(roverId);
     if (!entry || lastHeardAt === null || lastHeardAt < this.clock.now() - UNASSIGNED_MS) return 'none';
     this.unassigned.delete(roverId);
-    this.lanes.set(
-      roverId,
-      this.liveLane(entry, { basis: 'noShiftSet', onShift: [], pauses: [] }, undefined),
-    );
+    this.lanes.set(roverId, this.liveLane(entry, { basis: 'noShiftSet', onShift: [], pauses: [] }));
     return 'new';
   }
 
@@ -179,7 +173,7 @@ export class LanesStore implements LaneSource {
     return moved;
   }
 
-  private liveLane(entry: RosterEntry, crewDay: CrewDay, badge: RoverBadge | undefined): LiveLane {
+  private liveLane(entry: RosterEntry, crewDay: CrewDay): LiveLane {
     const lane: LiveLane = {
       entry,
       day: this.day,
@@ -190,10 +184,10 @@ export class LanesStore implements LaneSource {
       stale: true,
       measured: null,
       seen: '',
-      badge: badge ?? null,
+      badge: this.badges.get(entry.roverId) ?? null,
       again: null,
     };
-    if (badge?.shot) this.refresh(lane);
+    if (lane.badge?.shot) this.refresh(lane);
     lane.again = this.againOf(lane, this.clock.now());
     return lane;
   }

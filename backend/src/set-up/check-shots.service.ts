@@ -12,17 +12,21 @@ import { Clock } from '../common/clock.js';
 import { localDayOf } from '../common/local-day.js';
 import { notFound, ProblemException } from '../common/problem.exception.js';
 import { DATABASE } from '../database/database.module.js';
+import type { Epoch } from '../fixes/epoch.js';
 import { FixesService } from '../fixes/fixes.service.js';
 import { RoverAccessService } from '../fixes/rover-access.service.js';
 import { RosterRepository } from '../rovers/roster.repository.js';
 import { SettingsService } from '../settings/settings.service.js';
 import { CheckShotsRepository } from './check-shots.repository.js';
-import { meanPosition, type MeanPosition } from './mean-position.js';
+import { epochWarnings } from './epoch-warnings.js';
+import { meanPosition } from './mean-position.js';
 import { SetUpCardsRepository } from './set-up-cards.repository.js';
 import { groundOfMean, groundOfTyped, shotResult } from './shot-result.js';
 
 /** The newest fixed epochs are looked for this far back: what is older was another place. */
 const LOOKED_BACK_MS = 15 * 60_000;
+/** A receiver's clock may be a little ahead. */
+const AHEAD_MS = 60_000;
 /** Farther from the control point is another one, or another datum. */
 const FARTHEST_M = 50;
 const FIXED = 4;
@@ -114,12 +118,17 @@ export class CheckShotsService {
   private take(viewer: Viewer, { roverId, measure }: CheckShotBody, point: ControlPoint): Taken {
     this.access.visibleFrom(viewer, roverId);
     const now = this.clock.now();
-    const { timeZone: zone, checkShotLimits } = this.settings.get();
+    const { timeZone: zone, checkShotLimits, toleranceProfile } = this.settings.get();
     const card = this.cards.newest(roverId, localDayOf(now, zone).start, now) ?? null;
-    const mean = measure.from === 'epochs' ? this.meanOf(roverId, measure.epochs, now) : null;
+    const epochs = measure.from === 'epochs' ? this.newestFixed(roverId, measure.epochs, now) : [];
+    const mean = meanPosition(epochs);
     const ground =
       measure.from === 'typed' ? groundOfTyped(measure, point) : groundOfMean(mean!, card, point);
     const result = shotResult(ground, mean, card, point, checkShotLimits);
+    if (mean) {
+      const maxAgeMs = toleranceProfile.maxAgeSeconds * 1000;
+      result.warnings.push(...epochWarnings(epochs, mean.scatter, { now, maxAgeMs }));
+    }
     if (result.horizontalM > FARTHEST_M) {
       const metres = Math.round(result.horizontalM);
       const far = metres < 10_000 ? `${metres} m` : `${Math.round(metres / 1000)} km`;
@@ -130,12 +139,13 @@ export class CheckShotsService {
     }
     if (point.datum !== null)
       result.warnings.push(`Nothing is transformed: the rover must give positions in ${point.datum}.`);
-    return { result, card, stationId: this.fixes.latest(roverId)?.stationId ?? null };
+    const newest = epochs.at(-1) ?? this.fixes.latest(roverId);
+    return { result, card, stationId: newest?.stationId ?? null };
   }
 
-  private meanOf(roverId: number, wanted: number, now: number): MeanPosition {
+  private newestFixed(roverId: number, wanted: number, now: number): Epoch[] {
     const fixed = this.fixes
-      .epochs(roverId, now - LOOKED_BACK_MS, now + 1)
+      .epochs(roverId, now - LOOKED_BACK_MS, now + AHEAD_MS)
       .filter(
         ({ quality, latitude, longitude }) => quality === FIXED && latitude !== null && longitude !== null,
       );
@@ -144,7 +154,7 @@ export class CheckShotsService {
         '/measure/epochs',
         `There are ${fixed.length} fixed positions of the last quarter of an hour, and ${wanted} are asked for.`,
       );
-    return meanPosition(fixed.slice(-wanted))!;
+    return fixed.slice(-wanted);
   }
 }
 

@@ -22,18 +22,23 @@ const allOf = (values: readonly (number | null)[]): number[] | null => {
   return known.length === values.length ? known : null;
 };
 
+/** The same meridian, within half a turn of another: -179.9° is 180.1° beside 179.9°. */
+const nearTo = (longitude: number, other: number): number =>
+  longitude - 360 * Math.round((longitude - other) / 360);
+
 /**
  * Mean of some epochs of one pole that stands still, in order of time, and how they scatter about it in the local frame. Degrees
  * may be averaged as they are: over the metres that they lie apart they are straight. Null without a position.
  */
 export function meanPosition(epochs: readonly Placed[]): MeanPosition | null {
   const latitudes = allOf(epochs.map(({ latitude }) => latitude));
-  const longitudes = allOf(epochs.map(({ longitude }) => longitude));
-  if (epochs.length === 0 || !latitudes || !longitudes) return null;
+  const known = allOf(epochs.map(({ longitude }) => longitude));
+  if (epochs.length === 0 || !latitudes || !known) return null;
+  const longitudes = known.map((longitude) => nearTo(longitude, known[0]!));
   const altitudes = allOf(epochs.map(({ altitudeM }) => altitudeM));
   const separations = allOf(epochs.map(({ geoidSeparationM }) => geoidSeparationM));
   const latitude = mean(latitudes)!;
-  const longitude = mean(longitudes)!;
+  const longitude = nearTo(mean(longitudes)!, 0);
   const offsets = latitudes.map((phi, index) =>
     enuOf({ latitude: phi, longitude: longitudes[index]!, heightM: 0 }, { latitude, longitude, heightM: 0 }),
   );

@@ -1,6 +1,7 @@
 import { Inject, Injectable } from '@nestjs/common';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { checkShots } from '@hubtack/drizzle/schema/check-shots.js';
+import { rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { setUpCards } from '@hubtack/drizzle/schema/set-up-cards.js';
 import { eq, gte, sql } from 'drizzle-orm';
 import { DATABASE } from '../database/database.module.js';
@@ -24,7 +25,7 @@ export class RoverBadgesRepository {
       badges.set(roverId, known);
       return known;
     };
-    for (const row of this.cardsSince(dayStart)) badgeOf(row.roverId).card = row;
+    for (const { card } of this.cardsSince(dayStart)) badgeOf(card.roverId).card = card;
     for (const { shot, card } of this.shotsSince(since)) {
       const { at, stationId, mountPoint, passed, result } = shot;
       badgeOf(shot.roverId).shot = {
@@ -39,13 +40,14 @@ export class RoverBadgesRepository {
     return badges;
   }
 
-  /** Oldest first, so that the newest of a rover comes last. */
+  /** The newest of each rover, looked up rover by rover: there is one card for each rover and day, for years. */
   private cardsSince(from: number) {
+    const newest = sql`(SELECT newest.id FROM ${setUpCards} AS newest WHERE newest.rover_id = ${rovers.id}
+      AND newest.at >= ${from} ORDER BY newest.at DESC, newest.id DESC LIMIT 1)`;
     return this.database
-      .select()
-      .from(setUpCards)
-      .where(gte(setUpCards.at, from))
-      .orderBy(setUpCards.at)
+      .select({ card: setUpCards })
+      .from(rovers)
+      .innerJoin(setUpCards, eq(setUpCards.id, newest))
       .all();
   }
 

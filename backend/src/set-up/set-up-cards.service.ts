@@ -76,10 +76,13 @@ export class SetUpCardsService {
     const latest = this.fixes.latest(roverId);
     if (!latest) return { at: null, state: 'silent', aboveGeoidM: null, aboveEllipsoidM: null };
     const isHeld = (this.fixes.heldUntil(roverId) ?? 0) > this.clock.now();
+    const state = fixStateOfQuality(latest.quality);
+    // What a receiver writes without a position is filler, not a height.
+    const altitudeM = state === 'none' ? null : latest.altitudeM;
     return {
       at: new Date(latest.time).toISOString(),
-      state: isHeld ? fixStateOfQuality(latest.quality) : 'silent',
-      ...groundHeight(latest, pole),
+      state: isHeld ? state : 'silent',
+      ...groundHeight({ ...latest, altitudeM }, pole),
     };
   }
 

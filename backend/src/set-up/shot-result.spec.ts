@@ -47,11 +47,7 @@ describe('a check shot', () => {
     expect(result.difference.northM).toBeCloseTo(-0.004, 5);
     expect(result.difference.upM).toBeCloseTo(0.012, 5);
     expect(result.horizontalM).toBeCloseTo(0.00894, 5);
-    expect(result).toMatchObject({
-      passed: true,
-      poleHeightM: 1.893,
-      warnings: [expect.stringContaining('Few')],
-    });
+    expect(result).toMatchObject({ passed: true, poleHeightM: 1.893, warnings: [] });
   });
   it('counts heights as the control point does', () => {
     const geoid = { ...point, height: 38.107, heightKind: 'geoid' } as const;
@@ -69,6 +65,13 @@ describe('a check shot', () => {
     const result = resultOf([epoch(0, 0)], { pole: { ...pole, poleHeightM: 2 } as unknown as typeof pole });
     expect(result.difference.upM).toBeCloseTo(-0.2, 5);
     expect(result.passed).toBe(false);
+    expect(result.warnings).toEqual([expect.stringContaining('read pole height')]);
+  });
+  it('of a leaning pole says so, whether or not there is a height', () => {
+    const leaning = { ...pole, tilt: 'notCalibrated' } as unknown as typeof pole;
+    expect(resultOf([epoch(0, 0)], { pole: leaning, point: { ...point, height: null } }).warnings).toContain(
+      'Tilt compensation is on and not calibrated.',
+    );
   });
   it('without a card, or a height to compare with, checks the plan and says so', () => {
     expect(resultOf([epoch(0, 0, 99)], { pole: null })).toMatchObject({
@@ -88,6 +91,7 @@ describe('a check shot', () => {
     const other = groundOfTyped({ ...typed, heightKind: 'geoid' }, point);
     expect(other.heightM).toBeNull();
     expect(other.warnings[0]).toContain('above the ellipsoid');
+    expect(groundOfTyped({ ...typed, heightM: null }, point).warnings[0]).toContain('No height was typed');
   });
 });
 
@@ -114,6 +118,13 @@ describe('the mean of some epochs', () => {
         expect(resultOf(list).difference.eastM).toBeCloseTo(average, 6);
       }),
     );
+  });
+  it('is a place on the same side of the earth where longitudes jump from 180 to -180', () => {
+    const found = meanPosition(
+      [179.9999999, -179.9999998].map((longitude) => ({ ...epoch(0, 0), longitude })),
+    )!;
+    expect(found.longitude).toBeCloseTo(-179.99999995, 9);
+    expect(found.scatter!.eastM).toBeLessThan(0.1);
   });
   it('there is none without a position', () => {
     expect(meanPosition([])).toBeNull();

@@ -10,14 +10,10 @@ export type TypedMeasure = Extract<CheckShotMeasure, { from: 'typed' }>;
 type Point = Pick<ControlPoint, 'latitude' | 'longitude' | 'height' | 'heightKind'>;
 type Pole = Pick<SetUpCard, 'poleHeightM' | 'measuringPoint' | 'antennaOffsetM' | 'tilt'>;
 
-const UNKNOWN_KIND: Record<ControlPoint['heightKind'], string> = {
+const HEIGHT_KINDS: Record<ControlPoint['heightKind'], string> = {
   ellipsoidal: 'above the ellipsoid',
   geoid: 'above the geoid',
 };
-/** More scatter than this is a pole that moved, or a fix that was none (common practice, no source). */
-const SCATTER_M = 0.03;
-const FEW_EPOCHS = 5;
-
 /** What a rover measured, reduced to the ground and counted as the control point's height is. */
 interface Ground {
   latitude: number;
@@ -29,22 +25,17 @@ interface Ground {
 /** The mean of some epochs on the ground. Without a set-up card nobody knows how long the pole is. */
 export function groundOfMean(mean: MeanPosition, pole: Pole | null, point: Point): Ground {
   const { latitude, longitude } = mean;
-  const warnings: string[] = [];
-  let heightM: number | null = null;
-  if (!pole) warnings.push('There is no set-up card of today: the height is not compared.');
-  else if (point.height !== null) {
-    const { aboveGeoidM, aboveEllipsoidM } = groundHeight(mean, pole);
-    heightM = point.heightKind === 'geoid' ? aboveGeoidM : aboveEllipsoidM;
-    if (heightM === null)
-      warnings.push(
-        `The receiver says no height ${UNKNOWN_KIND[point.heightKind]}: the height is not compared.`,
-      );
-    if (pole.tilt === 'notCalibrated') warnings.push('Tilt compensation is on and not calibrated.');
+  if (!pole) {
+    const warnings = ['There is no set-up card of today: the height is not compared.'];
+    return { latitude, longitude, heightM: null, warnings };
   }
-  if (mean.epochs < FEW_EPOCHS) warnings.push('Few epochs: a mean of ten or more says more.');
-  const { scatter } = mean;
-  if (scatter && Math.hypot(scatter.eastM, scatter.northM) > SCATTER_M)
-    warnings.push('The epochs scatter widely: did the pole stand still?');
+  const warnings = pole.tilt === 'notCalibrated' ? ['Tilt compensation is on and not calibrated.'] : [];
+  const { aboveGeoidM, aboveEllipsoidM } = groundHeight(mean, pole);
+  const heightM = point.heightKind === 'geoid' ? aboveGeoidM : aboveEllipsoidM;
+  if (heightM === null && point.height !== null)
+    warnings.push(
+      `The receiver says no height ${HEIGHT_KINDS[point.heightKind]}: the height is not compared.`,
+    );
   return { latitude, longitude, heightM, warnings };
 }
 
@@ -52,10 +43,13 @@ export function groundOfMean(mean: MeanPosition, pole: Pole | null, point: Point
 export function groundOfTyped(typed: TypedMeasure, point: Point): Ground {
   const { latitude, longitude } = typed;
   const isLike = typed.heightKind === point.heightKind;
-  const warnings =
-    typed.heightM !== null && point.height !== null && !isLike
-      ? [`The control point’s height counts ${UNKNOWN_KIND[point.heightKind]}: the height is not compared.`]
-      : [];
+  const warnings: string[] = [];
+  if (point.height !== null && typed.heightM === null)
+    warnings.push('No height was typed: the plan alone is checked.');
+  else if (point.height !== null && !isLike)
+    warnings.push(
+      `The control point’s height counts ${HEIGHT_KINDS[point.heightKind]}: the height is not compared.`,
+    );
   return { latitude, longitude, heightM: isLike ? typed.heightM : null, warnings };
 }
 
@@ -84,6 +78,8 @@ export function shotResult(
   if (point.height === null) warnings.push('The control point has no height: the plan alone is checked.');
   const horizontalM = Math.hypot(eastM, northM);
   const up = isCompared ? upM : null;
+  const isHeightRight = up === null || Math.abs(up) <= limits.verticalM;
+  if (!isHeightRight) warnings.push(heightAdvice(point.heightKind, mean !== null));
   return {
     epochs: mean?.epochs ?? null,
     firstAt: mean ? new Date(mean.firstAt).toISOString() : null,
@@ -97,7 +93,13 @@ export function shotResult(
     horizontalM,
     horizontalLimitM: limits.horizontalM,
     verticalLimitM: limits.verticalM,
-    passed: horizontalM <= limits.horizontalM && (up === null || Math.abs(up) <= limits.verticalM),
+    passed: horizontalM <= limits.horizontalM && isHeightRight,
     warnings,
   };
 }
+
+/** A sentence counts its altitude from the receiver's own geoid, which may be decimetres from the one that the mark was levelled to. */
+const heightAdvice = (kind: ControlPoint['heightKind'], isMeasured: boolean): string =>
+  isMeasured && kind === 'geoid'
+    ? 'The height is off: read pole height and antenna offset again. If they are right, does the receiver use the geoid of the control point?'
+    : 'The height is off: read pole height and antenna offset again.';

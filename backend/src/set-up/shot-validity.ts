@@ -1,6 +1,6 @@
 import type { AgainReason } from '@hubtack/contracts/set-up/check-shot.js';
 import type { SetUpCard } from '@hubtack/contracts/set-up/set-up-card.js';
-import { partition, type HeardSpan } from '../fixes/timeline.js';
+import type { HeardSpan } from '../fixes/timeline.js';
 
 /** What a check shot vouched for. */
 export interface ShotFacts {
@@ -46,12 +46,14 @@ export function againReasonOf(shot: ShotFacts, rover: RoverNow, lostMs: number):
   return longestWithoutFixMs(rover.spans, shot.at, rover.now) > lostMs ? 'fixLost' : null;
 }
 
+/** Looked at for every lane four times a second, so without making anything. */
 function longestWithoutFixMs(spans: readonly HeardSpan[], from: number, now: number): number {
   let longest = 0;
-  let current = 0;
-  for (const { state, start, end } of partition(spans, from, now, now)) {
-    current = state === 'fixed' ? 0 : current + (end - start);
-    longest = Math.max(longest, current);
+  let fixedUntil = from;
+  for (const { state, start, end } of spans) {
+    if (state !== 'fixed' || end <= from || start >= now) continue;
+    longest = Math.max(longest, start - fixedUntil);
+    fixedUntil = Math.min(end, now);
   }
-  return longest;
+  return Math.max(longest, now - fixedUntil);
 }
