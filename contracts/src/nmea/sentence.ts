@@ -189,12 +189,17 @@ function readGga(talker: string): GgaSentence | SentenceFault {
   };
 }
 
+/** The date that was reckoned last: a receiver says the same one all day long. */
+let lastDate: { year: number; month: number; day: number; number: DayNumber | null } | null = null;
+
 /** Days since 1970 of a calendar date; null when there is no such date. */
 export function dayNumber(year: number, month: number, day: number): DayNumber | null {
+  if (lastDate?.day === day && lastDate.month === month && lastDate.year === year) return lastDate.number;
   const ms = Date.UTC(year, month - 1, day);
   const date = new Date(ms);
   const exists = date.getUTCMonth() === month - 1 && date.getUTCDate() === day;
-  return Number.isNaN(ms) || !exists ? null : ms / DAY_MS;
+  lastDate = { year, month, day, number: Number.isNaN(ms) || !exists ? null : ms / DAY_MS };
+  return lastDate.number;
 }
 
 function readRmc(): DateSentence | SentenceFault {
