@@ -8,6 +8,8 @@ import { LogFiles } from './log.files.js';
 import { LogsService } from './logs.service.js';
 
 const TOO_LARGE = `A log may have at most ${MAX_LOG_BYTES / 2 ** 20} MB. Upload it in parts.`;
+/** An upload that brings nothing for so long has broken off. */
+const STALLED_MS = 60_000;
 /** What a multipart body has beside the file. */
 const OVERHEAD_BYTES = 64 * 1024;
 
@@ -59,6 +61,7 @@ export class LogUploadInterceptor implements NestInterceptor {
     // Said by its length alone: nothing is read, nothing is written.
     if (Number(request.headers['content-length'] ?? 0) > MAX_LOG_BYTES + OVERHEAD_BYTES) throw tooLarge();
     this.logs.beginUpload();
+    request.setTimeout(STALLED_MS, () => request.destroy());
     try {
       await new Promise<void>((resolve, reject) => {
         this.read(request, http.getResponse<Response>(), (error: unknown) => {
@@ -69,6 +72,8 @@ export class LogUploadInterceptor implements NestInterceptor {
     } catch (error) {
       this.logs.endUpload();
       throw error;
+    } finally {
+      request.setTimeout(0);
     }
     return next.handle().pipe(finalize(() => this.logs.endUpload()));
   }
