@@ -20,8 +20,9 @@ const compressed = (): Plugin => ({
   },
 });
 
-/** What opens without signal: the shell, signing in, and the chief's page. The rest of the office stays at home. */
-const opensOffline = /\/src\/(main\.tsx|features\/(my-crew\/my-crew-page|sign-in\/sign-in-page)\.tsx)$/;
+/** What opens without signal: the shell, signing in, the chief's page and the set-up card. The rest of the office stays at home. */
+const opensOffline =
+  /\/src\/(main\.tsx|features\/(my-crew\/my-crew-page|set-up\/set-up-page|sign-in\/sign-in-page)\.tsx)$/;
 const keptFiles = new Set<string>();
 
 const findKeptFiles = (): Plugin => ({
@@ -79,10 +80,10 @@ const offline = VitePWA({
     ],
     navigateFallback: '/index.html',
     // Other pages come from the server, as their code does: an older shell would ask for code that is gone.
-    navigateFallbackAllowlist: [/^\/(my-crew|sign-in)\/?$/],
+    navigateFallbackAllowlist: [/^\/(my-crew|sign-in|rovers\/\d+\/set-up)\/?$/],
     runtimeCaching: [
       {
-        urlPattern: /\/api\/(crews\/\d+\/day|auth\/me)$/,
+        urlPattern: /\/api\/(crews\/\d+\/day|auth\/me|set-up-cards\/start\?roverId=\d+)$/,
         handler: 'NetworkFirst',
         options: {
           cacheName: 'hubtack-answers',

@@ -14,14 +14,19 @@ export class ApiError extends Error {
 
 type Method = 'GET' | 'POST' | 'PUT' | 'DELETE';
 
-async function send(method: Method, path: string, body: unknown): Promise<Response> {
+async function send(
+  method: Method,
+  path: string,
+  body: unknown,
+  headers: Record<string, string> = {},
+): Promise<Response> {
   try {
     return await fetch(path, {
       method,
       credentials: 'same-origin',
       ...(body === undefined
         ? {}
-        : { headers: { 'content-type': 'application/json' }, body: JSON.stringify(body) }),
+        : { headers: { 'content-type': 'application/json', ...headers }, body: JSON.stringify(body) }),
     });
   } catch (cause) {
     throw new ApiError(
@@ -56,11 +61,16 @@ export function refreshSignIn(): Promise<boolean> {
 }
 
 /** Calls the server. A short-lived sign-in that has run out is renewed once, and the call made again. */
-async function call(method: Method, path: string, body?: unknown): Promise<Response> {
-  let response = await send(method, path, body);
+async function call(
+  method: Method,
+  path: string,
+  body?: unknown,
+  headers?: Record<string, string>,
+): Promise<Response> {
+  let response = await send(method, path, body, headers);
   const isAboutSignIn = path.startsWith('/api/auth/') && path !== '/api/auth/me';
   if (response.status === 401 && !isAboutSignIn && (await refreshSignIn()))
-    response = await send(method, path, body);
+    response = await send(method, path, body, headers);
   if (!response.ok) throw await errorOf(response);
   return response;
 }
@@ -71,8 +81,9 @@ export async function api<T extends z.ZodType>(
   method: Method,
   path: string,
   body?: unknown,
+  headers?: Record<string, string>,
 ): Promise<z.infer<T>> {
-  const response = await call(method, path, body);
+  const response = await call(method, path, body, headers);
   const result = schema.safeParse(await response.json());
   if (!result.success)
     throw new ApiError('badAnswer', 'The server answers in a form this page does not know. Reload it.');

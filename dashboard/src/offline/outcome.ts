@@ -9,6 +9,7 @@ const withCrew = z.looseObject({ crewId: z.number().int() });
 function answerIdOf(kind: Tap['kind'], answer: unknown): number | null {
   switch (kind) {
     case 'flag':
+    case 'setUp':
       return withId.safeParse(answer).data?.id ?? null;
     case 'shift':
       return withCrew.safeParse(answer).data?.crewId ?? null;

@@ -9,7 +9,7 @@ export interface Tap {
   at: number;
   /** What it is called while it waits. */
   words: string;
-  kind: 'flag' | 'photo' | 'shift';
+  kind: 'flag' | 'photo' | 'shift' | 'setUp';
   /** `:under` stands for the id that the tap it hangs under has yet to be given. */
   url: string;
   body: Blob | object;

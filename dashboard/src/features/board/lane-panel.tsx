@@ -4,6 +4,7 @@ import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
 import { useEffect, useRef, useState, type ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import EpochCharts from '../../components/epoch-charts';
+import { SetUpLines } from '../../components/set-up-lines';
 import { SpanRibbon } from '../../components/span-ribbon';
 import { StateGlyph } from '../../components/state-glyph';
 import { stateNow, totalsNow } from '../../live/lane-figures';
@@ -88,6 +89,7 @@ export default function LanePanel({ id, onClose }: { id: number; onClose: () => 
           )}
         </Figure>
       </dl>
+      <SetUpLines lane={lane} zone={timeZone} />
       <EpochCharts roverId={id} from={from} to={null} zone={timeZone} />
       {role !== 'crewChief' && (
         <p className="panel-links">

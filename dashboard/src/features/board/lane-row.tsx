@@ -7,6 +7,7 @@ import { StateGlyph } from '../../components/state-glyph';
 import { stateNow, totalsNow } from '../../live/lane-figures';
 import { useLane, useLostFixOf, useServerNow } from '../../live/use-lanes';
 import { age, clockTime, distance, duration, utc } from '../../lib/format';
+import { checkWords } from '../../lib/set-up-words';
 import { percent } from '../../lib/percent';
 import { useMe } from '../../lib/session';
 import { LostFixNote } from './lost-fix-note';
@@ -42,13 +43,14 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
   const isHeard = state !== 'silent';
   const isOld = isHeard && lane.ageMs !== null && lane.ageMs > OLD_AGE_MS;
   const name = lane.crewName ?? 'No crew';
+  const check = checkWords(lane.checkShot, me.timeZone);
   return (
     <div
       className="lane"
       data-need={need}
       data-open={isOpen}
       role="row"
-      aria-label={`${name}, ${lane.roverLabel}`}
+      aria-label={[name, lane.roverLabel, check?.short].filter(Boolean).join(', ')}
     >
       <span className="lane-glyph" role="cell">
         <StateGlyph state={state} size={22} />
@@ -67,7 +69,14 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
         ) : (
           <strong>{name}</strong>
         )}
-        <small>{lane.roverLabel}</small>
+        <small>
+          {lane.roverLabel}
+          {check && (
+            <span className="lane-check" data-counts={check.counts} title={check.long}>
+              {check.short}
+            </span>
+          )}
+        </small>
       </span>
       <span className="lane-state" role="cell">
         <strong style={{ color: `var(--${state}-text)` }}>{fixStateWords[state]}</strong>

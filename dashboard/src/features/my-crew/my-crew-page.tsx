@@ -2,6 +2,7 @@ import { useEffect } from 'react';
 import { Empty, Failed, Loading } from '../../components/query-states';
 import { clockTime } from '../../lib/format';
 import { crewDayPath } from '../../lib/my-crew';
+import { setUpStartPath } from '../../lib/set-up';
 import { useMe } from '../../lib/session';
 import { useTaps } from '../../offline/use-taps';
 import { worker } from '../../offline/worker';
@@ -39,7 +40,16 @@ function MyCrew({ crewId }: { crewId: number }) {
   const own = useTaps(userId);
   const lostFixes = useLostFixes(day, crewId);
   useTapAnswers(crewId);
-  useEffect(() => worker.keep(['/api/auth/me', crewDayPath(crewId)]), [crewId]);
+  const setUpPaths = rovers.map(({ id }) => setUpStartPath(id)).join(' ');
+  useEffect(
+    () =>
+      worker.keep([
+        '/api/auth/me',
+        crewDayPath(crewId),
+        ...setUpPaths.split(' ').filter((path) => path !== ''),
+      ]),
+    [crewId, setUpPaths],
+  );
   const shift = shiftNow(day, waitingSteps(own.waiting));
 
   if (crew.isLoading) return <Loading what="your crew" />;

@@ -2,7 +2,9 @@ import { Button } from '@fluentui/react-components';
 import { fixStateWords } from '@hubtack/contracts/fixes/fix-state.js';
 import type { FlagWord } from '@hubtack/contracts/lost-fixes/lost-fix.js';
 import { useState, type ReactNode } from 'react';
+import { SetUpLines } from '../../components/set-up-lines';
 import { StateGlyph } from '../../components/state-glyph';
+import { Link } from 'react-router-dom';
 import { age, clockTime, distance, duration } from '../../lib/format';
 import { useMe } from '../../lib/session';
 import { FlagSheet } from './flag-sheet';
@@ -68,6 +70,11 @@ export function RoverPanel({ rover, now, crewId, isAlone }: RoverPanelProps) {
           </Button>
         )}
       </div>
+      {lane && <SetUpLines lane={lane} zone={timeZone} />}
+      <p className="rover-links">
+        <Link to={`/rovers/${rover.id}/set-up`}>Set-up card</Link>
+        <Link to={`/rovers/${rover.id}/check-shot`}>Check into control</Link>
+      </p>
       {sheet && (
         <FlagSheet
           crewId={crewId}
