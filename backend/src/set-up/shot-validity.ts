@@ -53,7 +53,7 @@ function longestWithoutFixMs(spans: readonly HeardSpan[], from: number, now: num
   for (const { state, start, end } of spans) {
     if (state !== 'fixed' || end <= from || start >= now) continue;
     longest = Math.max(longest, start - fixedUntil);
-    fixedUntil = Math.min(end, now);
+    fixedUntil = end;
   }
   return Math.max(longest, now - fixedUntil);
 }
