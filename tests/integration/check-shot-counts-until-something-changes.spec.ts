@@ -124,6 +124,16 @@ describe('a check shot', () => {
       ],
     });
   });
+  it('says what speaks against it: old corrections, a base that changed, epochs of a while ago', async () => {
+    await card();
+    await report(0, 15);
+    await report(15, 30, 4, { ageSeconds: 14, stationId: 2 });
+    await report(30, 90, 5);
+    const shot = await shoot({ measure: { from: 'epochs', epochs: 20 } });
+    expect(shot).toMatchObject({ passed: true, stationId: 2, lastAt: new Date(NINE + 29 * S).toISOString() });
+    for (const words of ['up to 14 s old', 'The base changed', 'newest fixed epoch is 61 s old'])
+      expect(shot.warnings).toContainEqual(expect.stringContaining(words));
+  });
   it('far from the control point is refused: it is another one', async () => {
     await report(0, 30, 4, { latitude: mark.latitude + 0.01 });
     const answer = await chief.call('POST', '/api/check-shots', shotBody());

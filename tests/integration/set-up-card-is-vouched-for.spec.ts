@@ -141,4 +141,6 @@ it('the ground height under the pole comes from the newest sentence', async () =
   expect(toPhaseCentre.aboveGeoidM).toBeCloseTo(38.2, 6);
   server.clock.advance(60_000);
   expect((await chief.json<Ground>('GET', path)).state).toBe('silent');
+  await postSentences(server.url, rover.key, gga(NINE + 60_000, 0, { altitudeM: 0 }));
+  expect(await chief.json<Ground>('GET', path)).toMatchObject({ state: 'none', aboveGeoidM: null });
 });
