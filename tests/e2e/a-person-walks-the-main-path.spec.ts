@@ -76,6 +76,7 @@ describe('each role signs in and does what it came for', () => {
     await postSentences(server.url, key, gga(Math.floor(Date.now() / 1000) * 1000, 4, { satellites: 17 }));
     await row.getByText('Fixed').waitFor({ timeout: 1000 });
     await row.getByText('17').waitFor();
+    await page.getByRole('link', { name: 'Logs' }).click();
     await page.getByRole('link', { name: 'Sentence reader' }).click();
     await page.getByRole('button', { name: 'Show an example' }).click();
     await page.getByText('RTK, ambiguities fixed').waitFor();

@@ -28,7 +28,7 @@ const LOOKED_BACK_MS = 15 * 60_000;
 /** A receiver's clock may be a little ahead. */
 const AHEAD_MS = 60_000;
 /** Farther from the control point is another one, or another datum. */
-const FARTHEST_M = 50;
+const FARTHEST_M = 10;
 const FIXED = 4;
 
 interface Taken {

@@ -16,9 +16,7 @@ const pages: readonly PageEntry[] = [
   { path: '/rovers', name: 'Rovers', roles: ['dispatcher', 'technician'] },
   { path: '/corrections', name: 'Corrections', roles: ['dispatcher', 'technician'] },
   { path: '/sites', name: 'Sites', roles: ['dispatcher', 'technician'] },
-  { path: '/control-points', name: 'Control points', roles: ['dispatcher', 'technician'] },
   { path: '/logs', name: 'Logs', roles: ['dispatcher', 'technician'] },
-  { path: '/sentence-reader', name: 'Sentence reader', roles: ['technician', 'dispatcher'] },
   { path: '/users', name: 'Users', roles: [] },
   { path: '/settings', name: 'Settings', roles: [] },
 ];

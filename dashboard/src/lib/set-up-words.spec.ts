@@ -28,6 +28,7 @@ it.each([
   [-0.0118, '−12 mm'],
   [0.0004, '0 mm'],
   [-0.0004, '0 mm'],
+  [-1.6449, '−1.645 m'],
 ])('%f m is %s', (metres, words) => {
   expect(millimetres(metres)).toBe(words);
 });

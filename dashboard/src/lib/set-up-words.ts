@@ -2,10 +2,15 @@ import type { Lane } from '@hubtack/contracts/board/lane.js';
 import { againWords } from '@hubtack/contracts/set-up/check-shot.js';
 import { clockTime } from './format';
 
+/** Millimetres up to a metre, metres beyond. */
+export const inMillimetres = (metres: number): string =>
+  metres < 1 ? `${Math.round(metres * 1000)} mm` : `${metres.toFixed(3)} m`;
+
 /** Millimetres with their sign, for differences: +9 mm, −12 mm. */
 export const millimetres = (metres: number): string => {
   const whole = Math.round(metres * 1000);
-  return `${whole > 0 ? '+' : whole < 0 ? '−' : ''}${Math.abs(whole)} mm`;
+  const sign = whole > 0 ? '+' : whole < 0 ? '−' : '';
+  return `${sign}${inMillimetres(Math.abs(metres))}`;
 };
 
 export interface CheckWords {

@@ -33,6 +33,9 @@ export default function LogsPage() {
       {(logs) => (
         <>
           <UploadForm />
+          <p>
+            A line or two are read in the <Link to="/sentence-reader">Sentence reader</Link>.
+          </p>
           <h2>Read before</h2>
           {remove.error && <p role="status">{remove.error.message}</p>}
           {logs.length === 0 ? (

@@ -1,19 +1,18 @@
 import type { CheckShotResult } from '@hubtack/contracts/set-up/check-shot.js';
 import { clockTimeSeconds, duration } from '../../lib/format';
-import { millimetres } from '../../lib/set-up-words';
+import { inMillimetres, millimetres } from '../../lib/set-up-words';
 import { useMe } from '../../lib/session';
 
 /** How far the rover is off, by direction, against what is allowed. Shape, word and colour say whether it passed. */
 export function ShotResult({ result }: { result: CheckShotResult }) {
   const { timeZone } = useMe();
   const { difference, scatter, passed, epochs, firstAt, lastAt, warnings } = result;
-  const limit = (metres: number) => `${Math.round(metres * 1000)} mm`;
   const spread = (metres: number | null) => (metres === null ? '–' : `${(metres * 1000).toFixed(1)} mm`);
   return (
     <>
       <p className="set-up-verdict" data-passed={passed} role="status">
         <span aria-hidden className="set-up-verdict-mark" />
-        {passed ? 'Passed' : 'Failed'}: {Math.round(result.horizontalM * 1000)} mm off in plan
+        {passed ? 'Passed' : 'Failed'}: {inMillimetres(result.horizontalM)} off in plan
         {difference.upM !== null && `, ${millimetres(difference.upM)} in height`}
       </p>
       <table className="set-up-differences">
@@ -43,7 +42,8 @@ export function ShotResult({ result }: { result: CheckShotResult }) {
         </tbody>
       </table>
       <p>
-        Allowed: {limit(result.horizontalLimitM)} in plan, {limit(result.verticalLimitM)} in height.
+        Allowed: {inMillimetres(result.horizontalLimitM)} in plan, {inMillimetres(result.verticalLimitM)} in
+        height.
         {epochs !== null &&
           firstAt !== null &&
           lastAt !== null &&

@@ -5,6 +5,7 @@ import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
 import { InUseField, NoteField, NumberField, TextField } from '../../components/form-fields';
 import { FormSheet } from '../../components/form-sheet';
+import { Link } from 'react-router-dom';
 import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
@@ -70,6 +71,7 @@ export default function SitesPage() {
       action={
         mayChange && (
           <div className="page-actions">
+            <Link to="/control-points">Control points</Link>
             <ImportLink kind="sites" />
             <Button appearance="primary" onClick={() => setOpen('new')}>
               Add a site
