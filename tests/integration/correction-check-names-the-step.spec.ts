@@ -41,7 +41,7 @@ describe('a source that is well', () => {
       'base pass',
     ]);
     expect(failed).toBeNull();
-    expect(step('sourceTable').seen).toBe('4 mount points, 1 casters, 1 networks.');
+    expect(step('sourceTable').seen).toBe('4 mount points, 1 caster, 1 network.');
     expect(step('mountPoint').seen).toBe('Tannery Flats, RTCM 3.3');
     expect(report.stream).toMatchObject({
       badFrames: 0,
@@ -196,6 +196,16 @@ describe('a fault of the stream fails the right step', () => {
     const right = await check({ mountPoint: 'TANF01', expectedFormat: 'legacy' });
     expect(right.failed).toBeNull();
     expect(right.report.base!.antennaHeightM).toBe(1.25);
+  });
+  it('a base that has not been told where it stands', async () => {
+    const nowhere = await startCaster({
+      secondMs: 40,
+      mountPoints: [{ ...base, name: 'TANF00', heightM: -6_378_000 }],
+    });
+    const { failed, step } = await check({ port: nowhere.port });
+    expect(failed).toBe('base');
+    expect(step('base').seen).toContain('no place for a base');
+    await nowhere.close();
   });
   it('a base that has moved, or is another, against the last check', async () => {
     const before = { ...testBase };

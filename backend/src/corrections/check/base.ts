@@ -17,9 +17,6 @@ export const expectedPrecision = (distanceM: number): { horizontalMm: number; ve
   verticalMm: 15 + distanceM / 1000,
 });
 
-/** More than this is another place: base positions are stated to tenths of a millimetre and do not wander. */
-export const MOVED_M = 0.02;
-
 /** The base as its message 1005 or 1006 has it, against where it was at the check before. */
 export function checkedBase(
   station: Station,

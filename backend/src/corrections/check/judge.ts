@@ -1,7 +1,11 @@
-import type { CheckedBase, CheckedStream, CheckStepName } from '@hubtack/contracts/corrections/check.js';
+import {
+  BASE_MOVED_M,
+  type CheckedBase,
+  type CheckedStream,
+  type CheckStepName,
+} from '@hubtack/contracts/corrections/check.js';
 import type { MountPoint } from '@hubtack/contracts/corrections/mount-point.js';
 import type { ReplyHead } from '../ntrip/reply-reader.js';
-import { MOVED_M } from './base.js';
 import type { CheckTarget } from './run-check.js';
 import type { Look } from './stream-look.js';
 
@@ -172,6 +176,9 @@ export function judgePosition(
   };
 }
 
+/** Ground that bases stand on, metres above the ellipsoid. */
+const LOWEST_M = -1000;
+const HIGHEST_M = 10_000;
 /** Beyond this a single base serves badly (common practice, no source). */
 const FAR_M = 20_000;
 const km = (metres: number): string => `${(metres / 1000).toFixed(1)} km`;
@@ -185,7 +192,14 @@ export function judgeBase(base: CheckedBase): Verdict {
     warnings.push('far for a single base: expect longer waits and less precision');
   const changed =
     'Find out why before anybody measures on: every point moves with the base. Check into control.';
-  if (movedM !== null && movedM > MOVED_M)
+  if (base.heightM < LOWEST_M || base.heightM > HIGHEST_M)
+    return {
+      passed: false,
+      seen: `Station ${stationId} says that it stands ${km(base.heightM)} above the ellipsoid: that is no place for a base.`,
+      toTry: 'The base has not been told where it stands. Ask its operator, and measure nothing with it.',
+      warnings,
+    };
+  if (movedM !== null && movedM > BASE_MOVED_M)
     return {
       passed: false,
       seen: `${at} The base has moved by ${movedM < 1000 ? `${movedM.toFixed(3)} m` : km(movedM)} since the last check.`,

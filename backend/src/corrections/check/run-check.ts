@@ -181,7 +181,7 @@ class Walk {
       Promise.resolve().then(() => tableOf(answer, address)),
     );
     const seen = found.table
-      ? `${found.table.records.STR} mount points, ${found.table.records.CAS} casters, ${found.table.records.NET} networks.`
+      ? tableWords(found.table.records)
       : 'No table is shown; the stream itself decides.';
     progress.pass('sourceTable', seen, found.warnings);
     return found;
@@ -300,6 +300,10 @@ class Walk {
     progress.pass('base', verdict.seen, verdict.warnings);
   }
 }
+
+const counted = (count: number, name: string): string => `${count} ${name}${count === 1 ? '' : 's'}`;
+const tableWords = ({ STR, CAS, NET }: { STR: number; CAS: number; NET: number }): string =>
+  `${counted(STR, 'mount point')}, ${counted(CAS, 'caster')}, ${counted(NET, 'network')}.`;
 
 /** So many mount points by distance are enough to choose from; the list has them all. */
 const NEAREST = 5;

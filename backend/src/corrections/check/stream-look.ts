@@ -34,6 +34,8 @@ export const isStream = ({ kind, status, headers }: ReplyHead): boolean =>
 
 /** Rovers say where they are this often. */
 const POSITION_EVERY_MS = 10_000;
+/** A stream has some kilobytes a second (RTCM 10410.0, 3.4): whoever sends more is not looked at for longer. */
+const MOST_BYTES = 1024 * 1024;
 /** Looked at this often whether the time is over. */
 const TICK_MS = 50;
 
@@ -61,6 +63,7 @@ export function lookAtStream(
     let acceptedAt = startedAt;
     let sentAt = startedAt;
     let firstByteAt: number | null = null;
+    let seenBytes = 0;
     const settle = (end: Look['end'] | Error) => {
       clearInterval(timer);
       signal.removeEventListener('abort', onAbort);
@@ -104,6 +107,8 @@ export function lookAtStream(
       body: (bytes) => {
         firstByteAt ??= now();
         meter.push(bytes, now());
+        seenBytes += bytes.length;
+        if (seenBytes > MOST_BYTES) settle('looked');
       },
       end: () => settle('closed'),
     });
