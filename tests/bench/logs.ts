@@ -102,16 +102,17 @@ class LogServer {
   /** Looks at the board until the work is over; answers how long each look took, ms. */
   async boardWhile(work: Promise<unknown>): Promise<number[]> {
     const [took, state] = [[] as number[], { isOver: false }];
-    const over = work.finally(() => {
+    const end = () => {
       state.isOver = true;
-    });
+    };
+    work.then(end, end);
     while (!state.isOver) {
       const began = performance.now();
       await (await this.call('/api/board')).arrayBuffer();
       took.push(performance.now() - began);
       await pause(20);
     }
-    await over;
+    await work;
     return took;
   }
 

@@ -14,7 +14,10 @@ setInterval(() => {
 }, 20);
 
 process.on('message', (message: { restart?: boolean; close?: boolean }) => {
-  if (message.close) void server.close().then(() => process.exit(0));
+  if (message.close) {
+    void server.close().then(() => process.send!({}));
+    return;
+  }
   const measured = { p99Ms: delay.percentile(99) / 1e6, maxMs: delay.max / 1e6, rssMb: rssMb(), peakMb };
   if (message.restart) {
     delay.reset();
@@ -22,6 +25,7 @@ process.on('message', (message: { restart?: boolean; close?: boolean }) => {
   }
   process.send!(measured);
 });
+process.once('disconnect', () => process.exit());
 process.send!({
   port: Number(new URL(server.url).port),
   cookie: technician.cookieHeader,
