@@ -42,6 +42,7 @@ export const router = createBrowserRouter([
       },
       { path: '/imports/:kind', element: page(() => import('../features/imports/imports-page')) },
       { path: '/rovers', element: page(() => import('../features/rovers/rovers-page')) },
+      { path: '/check-shots', element: page(() => import('../features/check-shots/check-shots-page')) },
       { path: '/rovers/:id/set-up', element: page(() => import('../features/set-up/set-up-page')) },
       { path: '/rovers/:id/check-shot', element: page(() => import('../features/set-up/check-shot-page')) },
       { path: '/rovers/:id', element: page(() => import('../features/rovers/rover-page')) },

@@ -9,6 +9,7 @@ import { useState } from 'react';
 import { DataTable } from '../../components/data-table';
 import { ChoiceField, InUseField, NoteField, NumberField, TextField } from '../../components/form-fields';
 import { FormSheet } from '../../components/form-sheet';
+import { Link } from 'react-router-dom';
 import { ImportLink } from '../../components/import-link';
 import { ListPage } from '../../components/list-page';
 import { Empty } from '../../components/query-states';
@@ -81,6 +82,7 @@ export default function ControlPointsPage() {
       query={query}
       action={
         <div className="page-actions">
+          <Link to="/check-shots">Checks of a day</Link>
           <ImportLink kind="control-points" />
           <Button appearance="primary" onClick={() => setOpen('new')}>
             Add a control point

@@ -10,6 +10,7 @@ import { LastHeard } from './last-heard';
 import { RoverAssignments } from './rover-assignments';
 import { ChangeRover } from './rover-form';
 import { RoverKeys } from './rover-keys';
+import { RoverSetUp } from './rover-set-up';
 import './rover-page.css';
 
 export default function RoverPage() {
@@ -55,6 +56,7 @@ export default function RoverPage() {
       </dl>
       {role !== 'crewChief' && <RoverAssignments rover={rover} />}
       {isTechnician && <RoverKeys rover={rover} />}
+      <RoverSetUp roverId={id} mayAdd={isTechnician} />
       <p className="caution">
         A rover’s positions say where people were: tell the crew that they are kept, and for how long. Heights
         need the right pole height and measuring point; a wrong one shifts every point taken.

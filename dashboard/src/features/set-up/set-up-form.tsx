@@ -20,7 +20,7 @@ import type { z } from 'zod';
 import { ChoiceField, NoteField, NumberField, TextField } from '../../components/form-fields';
 import { Form } from '../../components/form';
 import { useMe } from '../../lib/session';
-import { cardChanges, type CardValues } from './card-changes';
+import { cardChanges, type CardValues } from '../../lib/card-changes';
 import { DoubtQuestions } from './doubt-questions';
 import { GroundLine, TiltTable } from './ground-line';
 
