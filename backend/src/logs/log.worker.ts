@@ -1,5 +1,6 @@
 import { closeSync, openSync, readSync } from 'node:fs';
 import { once } from 'node:events';
+import { constants, setPriority } from 'node:os';
 import { parentPort, workerData } from 'node:worker_threads';
 import { DAY_MS } from '@hubtack/contracts/nmea/sentence.js';
 import { LogAnalysis, type LogQuestion } from './analyse-log.js';
@@ -52,6 +53,9 @@ async function enter({ epochs, sigmas }: EpochBatch): Promise<void> {
     await once(parentPort!, 'message');
   }
 }
+
+// On Linux this is of the calling thread alone: where processors are few, boards and rovers come first.
+if (process.platform === 'linux') setPriority(0, constants.priority.PRIORITY_LOW);
 
 const { receivedAt, limits, base, history } = task;
 const analysis = new LogAnalysis({ ...firstDay(), receivedAt, limits, base, history });
