@@ -1,5 +1,5 @@
 import { spawn, type ChildProcess } from 'node:child_process';
-import { mkdtempSync, rmSync } from 'node:fs';
+import { mkdtempSync, openSync, rmSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
 import { freePorts } from '../bench/free-ports.js';
@@ -11,6 +11,8 @@ const program = fromRoot('backend/dist/main.js');
 /** The built server in a process of its own, that can be killed and started again on the same files and port. */
 export class ServerProcess {
   private child: ChildProcess | null = null;
+  /** Where its log goes, for a test that reads it. */
+  logFile: string | null = null;
 
   private constructor(
     readonly folder: string,
@@ -34,7 +36,7 @@ export class ServerProcess {
 
   async start(): Promise<void> {
     this.child = spawn(process.execPath, ['--enable-source-maps', program], {
-      stdio: ['ignore', 'ignore', 'inherit'],
+      stdio: ['ignore', this.logFile === null ? 'ignore' : openSync(this.logFile, 'a'), 'inherit'],
       env: {
         ...process.env,
         NODE_ENV: 'production',

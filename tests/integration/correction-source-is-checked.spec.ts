@@ -223,6 +223,9 @@ describe('mount points of a source', () => {
       code: 'casterProblem',
       detail: expect.stringContaining('web page'),
     });
+    // Whoever presses again at once gets the same answer, and the caster is left alone.
+    expect((await technician.call('GET', `/api/correction-sources/${id}/mount-points`)).status).toBe(502);
+    expect(caster.requests).toHaveLength(1);
   });
 });
 

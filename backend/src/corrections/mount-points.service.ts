@@ -16,6 +16,8 @@ import { RunningChecks } from './running-checks.js';
 
 /** A table is asked for again after this long: it changes a few times a year. */
 const KEPT_MS = 60_000;
+/** A caster that gave none is left alone for so long: it may be counting who asks in vain. */
+const FAILED_MS = 15_000;
 
 interface Kept {
   /** What it was asked with: another address is another table. */
@@ -25,10 +27,17 @@ interface Kept {
   oddities: string[];
 }
 
+interface Failed {
+  of: string;
+  at: number;
+  problem: NtripProblem;
+}
+
 /** The mount points of a source's caster. */
 @Injectable()
 export class MountPointsService {
   private readonly kept = new Map<number, Kept>();
+  private readonly failed = new Map<number, Failed>();
 
   constructor(
     private readonly sources: CorrectionSourcesService,
@@ -64,6 +73,8 @@ export class MountPointsService {
   }
 
   private async ask(viewer: Viewer, sourceId: number, of: string): Promise<Kept> {
+    const failed = this.failed.get(sourceId);
+    if (failed?.of === of && this.clock.now() - failed.at < FAILED_MS) throw asRefusal(failed.problem);
     const target = this.runner.targetOf(this.sources.row(sourceId), null);
     const { cancel } = this.running.begin(sourceId, viewer.name);
     try {
@@ -74,9 +85,13 @@ export class MountPointsService {
     } catch (error) {
       if (cancel.signal.aborted) throw new ProblemException(503, 'stopping', 'It was cancelled.');
       if (!(error instanceof NtripProblem)) throw error;
-      throw new ProblemException(502, 'casterProblem', `${error.message} ${error.toTry}`, { cause: error });
+      this.failed.set(sourceId, { of, at: this.clock.now(), problem: error });
+      throw asRefusal(error);
     } finally {
       this.running.end(sourceId);
     }
   }
 }
+
+const asRefusal = (problem: NtripProblem) =>
+  new ProblemException(502, 'casterProblem', `${problem.message} ${problem.toTry}`, { cause: problem });
