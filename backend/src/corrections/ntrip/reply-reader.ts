@@ -24,6 +24,8 @@ export interface ReplyHandlers {
 export const MAX_HEAD_BYTES = 16 * 1024;
 const LF = 10;
 const HEADER = /^([A-Za-z][A-Za-z0-9-]*): *(.*)$/;
+/** The beginning of a header line that has not ended yet; text, and not the binary of a stream. */
+const HEADER_BEGUN = /^[A-Za-z][A-Za-z0-9-]*(:[ -~]*\r?)?$/;
 const RECORD = /^(STR|CAS|NET);|^ENDSOURCETABLE/;
 
 /** What was received, as it may be shown to a person. */
@@ -87,7 +89,7 @@ export class ReplyReader {
     const first = this.held[0];
     if (first === undefined || first === 13 || first === LF) return false;
     if (lineLength >= 0) return !HEADER.test(this.held.toString('latin1', 0, lineLength).replace(/\r$/, ''));
-    return !/^[A-Za-z][A-Za-z0-9-]*(:.*)?$/.test(this.held.toString('latin1', 0, 64));
+    return !HEADER_BEGUN.test(this.held.toString('latin1', 0, 64));
   }
 
   private beginBody(): void {
