@@ -11,5 +11,7 @@ export const crews = sqliteTable('crews', {
   hourlyRate: real('hourly_rate'),
   /** Weekly pattern in the firm's zone; counts on days without shift marks. */
   pattern: text('pattern', { mode: 'json' }).$type<ShiftPatternDay[]>().notNull(),
+  /** Name of its tolerance profile; null is the firm's. */
+  toleranceProfile: text('tolerance_profile'),
   active: flag('active').notNull().default(true),
 });

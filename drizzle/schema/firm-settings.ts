@@ -17,6 +17,7 @@ export const firmSettings = sqliteTable('firm_settings', {
     .$type<ToleranceProfile>()
     .notNull()
     .default(topographic),
+  otherProfiles: text('other_profiles', { mode: 'json' }).$type<ToleranceProfile[]>().notNull().default([]),
   checkShotLimits: text('check_shot_limits', { mode: 'json' })
     .$type<CheckShotLimits>()
     .notNull()

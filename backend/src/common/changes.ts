@@ -11,6 +11,8 @@ export type Change =
   | { kind: 'assignment'; roverId: number; from: number }
   /** What is known of these lost fixes changed. */
   | { kind: 'lostFix'; lostFixIds: number[] }
+  /** The work of a crew is judged by another tolerance profile. */
+  | { kind: 'crewProfile'; crewId: number }
   /** These local days became holidays, or are none any more. */
   | { kind: 'holidays'; days: string[] }
   /** A rover's keys changed. */

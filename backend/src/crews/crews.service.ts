@@ -75,15 +75,18 @@ export class CrewsService {
 
   change(viewer: Viewer, id: number, body: ChangeCrewBody): Crew {
     this.checkSite(body.siteId);
+    let isJudgedAnew = false;
     this.database.transaction((tx) => {
       const before = tx.select().from(crews).where(eq(crews.id, id)).get();
       if (!before) throw notFound('This crew');
       // Who may not see the rate sends none, and leaves it as it was.
       const hourlyRate = viewer.role === 'manager' ? body.hourlyRate : before.hourlyRate;
       const after = { ...body, hourlyRate };
+      isJudgedAnew = before.toleranceProfile !== body.toleranceProfile;
       uniquely('/name', NAME_TAKEN, () => tx.update(crews).set(after).where(eq(crews.id, id)).run());
       this.audit.record(viewer, { action: 'crew.changed', subject: before.name, before, after });
     });
+    if (isJudgedAnew) this.changes.announce({ kind: 'crewProfile', crewId: id });
     this.changes.announce({ kind: 'firm' });
     return this.get(viewer, id);
   }

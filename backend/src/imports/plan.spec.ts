@@ -82,6 +82,7 @@ describe('crews', () => {
     expect(row!.write?.body).toEqual({
       name: 'Alder',
       phone: null,
+      toleranceProfile: null,
       siteId: 7,
       hourlyRate: 95.5,
       pattern: [1, 2, 3, 5].map((weekday) => ({ weekday, ...hours })),

@@ -49,7 +49,7 @@ export function crewShape({ siteNames, maySetRates, workingWeek }: CrewSurroundi
   const columns: Record<string, string> = { siteId: 'site', hourlyRate: 'hourly rate', pattern: 'days' };
   return {
     schema: crewBody,
-    blank: { phone: null, siteId: null, hourlyRate: null, pattern: workingWeek },
+    blank: { phone: null, siteId: null, hourlyRate: null, pattern: workingWeek, toleranceProfile: null },
     read: (cell) => ({
       phone: cell('phone', asItIs),
       siteId: cell('site', (text) => {

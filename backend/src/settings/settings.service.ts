@@ -9,6 +9,7 @@ import { firmSettings } from '@hubtack/drizzle/schema/firm-settings.js';
 import { AuditService } from '../audit/audit.service.js';
 import type { Viewer } from '../auth/access.js';
 import { Changes } from '../common/changes.js';
+import { ProblemException } from '../common/problem.exception.js';
 import { DATABASE } from '../database/database.module.js';
 
 const ONLY_ROW = 1;
@@ -21,6 +22,7 @@ const defaults: Settings = {
   keepPositionsOffShift: false,
   limits: defaultLimits,
   toleranceProfile: topographic,
+  otherProfiles: [],
   checkShotLimits: defaultCheckShotLimits,
   workingWeek: mondayToFriday,
   weeklyMailHour: 7,
@@ -47,10 +49,12 @@ export class SettingsService {
       ...body,
       limits: body.limits ?? before.limits,
       toleranceProfile: body.toleranceProfile ?? before.toleranceProfile,
+      otherProfiles: body.otherProfiles ?? before.otherProfiles,
       checkShotLimits: body.checkShotLimits ?? before.checkShotLimits,
       workingWeek: body.workingWeek ?? before.workingWeek,
       weeklyMailHour: body.weeklyMailHour ?? before.weeklyMailHour,
     };
+    refuseSameName(settings);
     this.database.transaction((tx) => {
       tx.insert(firmSettings)
         .values({ id: ONLY_ROW, ...settings })
@@ -61,4 +65,13 @@ export class SettingsService {
     this.changes.announce({ kind: 'firm' });
     return settings;
   }
+}
+
+function refuseSameName({ toleranceProfile, otherProfiles }: Settings): void {
+  const index = otherProfiles.findIndex(({ name }) => name === toleranceProfile.name);
+  if (index < 0) return;
+  const detail = 'The firm\u2019s profile has this name.';
+  throw new ProblemException(400, 'invalidBody', detail, {
+    errors: [{ pointer: `/otherProfiles/${index}/name`, detail }],
+  });
 }

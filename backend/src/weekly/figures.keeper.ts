@@ -27,7 +27,8 @@ import { SettingsService } from '../settings/settings.service.js';
 import { ShiftsService, type RoverShift } from '../shifts/shifts.service.js';
 import { partFigures } from './part-figures.js';
 import { ShiftFiguresRepository, type ShiftFigureRow } from './shift-figures.repository.js';
-import { withinSpans } from './tolerance.js';
+import { CrewProfiles } from './crew-profiles.js';
+import { judgedParts, withinSpans } from './tolerance.js';
 
 const TICK_MS = 1000;
 /** Time that one tick may take from the thread that answers rovers. */
@@ -80,6 +81,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     private readonly shifts: ShiftsService,
     private readonly roster: RosterRepository,
     private readonly settings: SettingsService,
+    private readonly crewProfiles: CrewProfiles,
     private readonly figures: ShiftFiguresRepository,
     private readonly toDo: FiguresToDo,
     private readonly changes: Changes,
@@ -93,6 +95,7 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
         for (const roverId of this.shifts.roversSince(change.crewId, change.from))
           this.add(roverId, change.from, change.to);
       if (change.kind === 'assignment') this.add(change.roverId, change.from, this.clock.now());
+      if (change.kind === 'crewProfile') this.addCrew(change.crewId);
       if (change.kind === 'holidays') this.addDays(change.days);
       if (change.kind === 'firm') this.compareSettings();
     });
@@ -137,6 +140,12 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     }
   }
 
+  /** Tolerance is judged by raw epochs: for as long as they are kept. */
+  private addCrew(crewId: number): void {
+    const from = this.rawFrom();
+    for (const roverId of this.shifts.roversSince(crewId, from)) this.add(roverId, from, this.clock.now());
+  }
+
   private addDays(days: readonly string[]): void {
     const { timeZone: zone } = this.settings.get();
     const now = this.clock.now();
@@ -157,11 +166,10 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     const now = this.settings.get();
     this.known = now;
     if (!before) return;
-    const isSame = (name: 'timeZone' | 'limits' | 'toleranceProfile') =>
+    const isSame = (name: 'timeZone' | 'limits' | 'toleranceProfile' | 'otherProfiles') =>
       JSON.stringify(before[name]) === JSON.stringify(now[name]);
     if (!isSame('timeZone') || !isSame('limits')) this.addAll(0);
-    // Tolerance is judged by raw epochs: for as long as they are kept.
-    else if (!isSame('toleranceProfile')) this.addAll(this.rawFrom());
+    else if (!isSame('toleranceProfile') || !isSame('otherProfiles')) this.addAll(this.rawFrom());
   }
 
   private rawFrom(): number {
@@ -190,21 +198,22 @@ export class FiguresKeeper implements OnApplicationBootstrap, BeforeApplicationS
     const weeks = new Set<string>();
     this.database.transaction(() => {
       const window = { start: one.start, end: one.end + HOLD_MS };
-      this.writeWithin(one.roverId, window);
       const shifts = this.shifts.roverShifts(one.roverId, window, zone);
+      this.writeWithin(one.roverId, window, shifts);
       for (const day of this.daysOf(window, shifts, zone)) weeks.add(this.writeDay(one.roverId, day, zone));
       for (const part of one.parts) this.toDo.done(part);
     });
     for (const week of weeks) this.touchedWeeks.next(week);
   }
 
-  private writeWithin(roverId: number, window: Interval): void {
+  private writeWithin(roverId: number, window: Interval, shifts: readonly RoverShift[]): void {
     const epochs = this.fixes.judgedEpochs(roverId, window.start - HOLD_MS, window.end);
     const first = epochs[0]?.time;
     // Of what raw epochs do not tell, or no longer, what was worked out stays.
     if (first === undefined) return;
     const known = { start: Math.max(window.start, first), end: window.end };
-    const spans = withinSpans(epochs, this.settings.get().toleranceProfile, known);
+    const parts = judgedParts(known, shifts, this.crewProfiles.of(this.settings.get()));
+    const spans = parts.flatMap(({ profile, ...part }) => withinSpans(epochs, profile, part));
     this.figures.replaceWithin(roverId, known, spans);
   }
 

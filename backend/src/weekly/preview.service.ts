@@ -1,5 +1,6 @@
 import { Injectable } from '@nestjs/common';
 import type { Preview, PreviewBody } from '@hubtack/contracts/weekly/preview.js';
+import type { ToleranceProfile } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import { DateTime } from 'luxon';
 import { Clock } from '../common/clock.js';
 import { isoWeekOf, localDayOf } from '../common/local-day.js';
@@ -10,6 +11,7 @@ import { SettingsService } from '../settings/settings.service.js';
 import { ShiftsService } from '../shifts/shifts.service.js';
 import { partFigures } from './part-figures.js';
 import { ShiftFiguresRepository, type NamedShiftFigures } from './shift-figures.repository.js';
+import { CrewProfiles } from './crew-profiles.js';
 import { withinSpans } from './tolerance.js';
 import { weekFigures } from './week-figures.js';
 
@@ -24,6 +26,7 @@ export class PreviewService {
     private readonly fixes: FixesService,
     private readonly shifts: ShiftsService,
     private readonly settings: SettingsService,
+    private readonly crewProfiles: CrewProfiles,
     private readonly clock: Clock,
   ) {}
 
@@ -32,7 +35,8 @@ export class PreviewService {
     const now = this.clock.now();
     const week = isoWeekOf(DateTime.fromMillis(now, { zone }).minus({ weeks: 1 }).toMillis(), zone);
     const before = this.figures.ofWeek(week).slice(0, MOST);
-    const after = before.map((row) => this.asItWouldBe(row, body, zone, now));
+    const profileOf = this.crewProfiles.of(body);
+    const after = before.map((row) => this.asItWouldBe(row, body, profileOf(row.crewId), zone, now));
     return {
       week,
       before: weekFigures(before, true),
@@ -43,7 +47,8 @@ export class PreviewService {
 
   private asItWouldBe(
     row: NamedShiftFigures,
-    { limits, toleranceProfile }: PreviewBody,
+    { limits }: PreviewBody,
+    profile: ToleranceProfile,
     zone: string,
     now: number,
   ): NamedShiftFigures {
@@ -57,7 +62,7 @@ export class PreviewService {
     const epochs = this.fixes.epochs(roverId, day.start - HOLD_MS, day.end);
     const stored = this.figures.withinSpans(roverId, day);
     // Without raw epochs nobody can say what another profile would make of it.
-    const within = epochs.length > 0 ? withinSpans(epochs, toleranceProfile, day) : stored;
+    const within = epochs.length > 0 ? withinSpans(epochs, profile, day) : stored;
     const part = partFigures(shift, day, spans, within, now, detectorLimitsOf(limits));
     if (!part) return row;
     const { totals, ...figures } = part;

@@ -32,3 +32,42 @@ export function withinSpans(
     .filter(({ state }) => state === 'fixed')
     .map(({ start, end }) => ({ start, end }));
 }
+
+/** The profile that counts for a crew; the firm's for none. */
+export type ProfileOfCrew = (crewId: number | null) => ToleranceProfile;
+
+interface JudgedShift {
+  crewId: number;
+  start: number;
+  /** Null: it goes on. */
+  end: number | null;
+}
+
+/**
+ * The window in parts, each with the profile that counts in it: a crew's own during its shifts, the firm's between them. `shifts`: of
+ * one rover; they do not overlap.
+ */
+export function judgedParts(
+  window: Interval,
+  shifts: readonly JudgedShift[],
+  profileOf: ProfileOfCrew,
+): (Interval & { profile: ToleranceProfile })[] {
+  const firm = profileOf(null);
+  const parts: (Interval & { profile: ToleranceProfile })[] = [];
+  let at = window.start;
+  const add = (end: number, profile: ToleranceProfile) => {
+    const until = Math.min(end, window.end);
+    if (until <= at) return;
+    const last = parts.at(-1);
+    // Parts that count alike are one, so that a run over their border stays one.
+    if (last?.profile === profile) last.end = until;
+    else parts.push({ start: at, end: until, profile });
+    at = until;
+  };
+  for (const { crewId, start, end } of shifts.toSorted((a, b) => a.start - b.start)) {
+    add(start, firm);
+    add(end ?? Infinity, profileOf(crewId));
+  }
+  add(window.end, firm);
+  return parts;
+}

@@ -3,6 +3,7 @@ import { FixesModule } from '../fixes/fixes.module.js';
 import { RoversModule } from '../rovers/rovers.module.js';
 import { SettingsModule } from '../settings/settings.module.js';
 import { ShiftsModule } from '../shifts/shifts.module.js';
+import { CrewProfiles } from './crew-profiles.js';
 import { FiguresKeeper } from './figures.keeper.js';
 import { LostTimeRepository } from './lost-time.repository.js';
 import { PreviewService } from './preview.service.js';
@@ -14,7 +15,14 @@ import { WeeklyService } from './weekly.service.js';
 @Module({
   imports: [FixesModule, ShiftsModule, RoversModule, SettingsModule],
   controllers: [WeeklyController],
-  providers: [ShiftFiguresRepository, LostTimeRepository, FiguresKeeper, WeeklyService, PreviewService],
+  providers: [
+    ShiftFiguresRepository,
+    LostTimeRepository,
+    CrewProfiles,
+    FiguresKeeper,
+    WeeklyService,
+    PreviewService,
+  ],
   exports: [WeeklyService, FiguresKeeper],
 })
 export class WeeklyModule {}

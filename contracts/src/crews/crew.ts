@@ -36,6 +36,8 @@ export const crewBody = z.object({
   siteId: id.nullable(),
   hourlyRate: z.number().min(0, 'Not below zero').max(100_000).nullable(),
   pattern: shiftPattern,
+  /** Name of the tolerance profile that its work is judged by; null is the firm's. */
+  toleranceProfile: shortText('the name of the profile', 40).nullable().default(null),
 });
 export type CrewBody = z.infer<typeof crewBody>;
 

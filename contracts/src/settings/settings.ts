@@ -3,7 +3,7 @@ import { z } from 'zod';
 import { shortText } from '../common.js';
 import { shiftPattern } from '../crews/crew.js';
 import { limits } from '../lost-fixes/limits.js';
-import { toleranceProfile } from '../weekly/tolerance-profile.js';
+import { otherProfiles, toleranceProfile } from '../weekly/tolerance-profile.js';
 
 const isTimeZone = (zone: string): boolean => {
   try {
@@ -23,6 +23,7 @@ export const settings = z.object({
   keepPositionsOffShift: z.boolean(),
   limits,
   toleranceProfile,
+  otherProfiles,
   checkShotLimits,
   /** The pattern that a new crew begins with. */
   workingWeek: shiftPattern,
@@ -33,6 +34,7 @@ export type Settings = z.infer<typeof settings>;
 export const settingsBody = settings.partial({
   limits: true,
   toleranceProfile: true,
+  otherProfiles: true,
   checkShotLimits: true,
   workingWeek: true,
   weeklyMailHour: true,

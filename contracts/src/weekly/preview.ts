@@ -1,9 +1,9 @@
 import { z } from 'zod';
 import { limits } from '../lost-fixes/limits.js';
-import { toleranceProfile } from './tolerance-profile.js';
+import { otherProfiles, toleranceProfile } from './tolerance-profile.js';
 import { isoWeek, weekFigures } from './weekly.js';
 
-export const previewBody = z.object({ limits, toleranceProfile });
+export const previewBody = z.object({ limits, toleranceProfile, otherProfiles: otherProfiles.default([]) });
 export type PreviewBody = z.infer<typeof previewBody>;
 
 /** Figures of the last whole week as they are, and as they would be. */

@@ -20,6 +20,7 @@ function Fields() {
   const { data: sites = [] } = useQuery(sitesQuery);
   const { data: settings } = useQuery(settingsQuery);
   const { role } = useMe();
+  const profiles = settings?.otherProfiles ?? [];
   const options = sites.filter(({ active }) => active).map(({ id, name }) => ({ value: id, label: name }));
   return (
     <>
@@ -41,6 +42,14 @@ function Fields() {
           hint="Only managers see it"
         />
       )}
+      <ChoiceField
+        key={`profiles ${profiles.length}`}
+        name="toleranceProfile"
+        label="Tolerance profile"
+        hint="What the time of its rovers is judged by in the weekly figures"
+        options={profiles.map(({ name }) => ({ value: name, label: name }))}
+        none={`The firm’s${settings ? `: ${settings.toleranceProfile.name}` : ''}`}
+      />
       <PatternFields />
     </>
   );
@@ -55,7 +64,7 @@ function AddCrew({ onDone }: { onDone: () => void }) {
     <FormSheet
       title="Add a crew"
       schema={crewBody}
-      defaults={{ name: '', phone: null, siteId: null, hourlyRate: null, pattern }}
+      defaults={{ name: '', phone: null, siteId: null, hourlyRate: null, pattern, toleranceProfile: null }}
       button="Add the crew"
       save={add.mutateAsync}
       onDone={onDone}
@@ -67,12 +76,12 @@ function AddCrew({ onDone }: { onDone: () => void }) {
 
 function ChangeCrew({ crew, onDone }: { crew: Crew; onDone: () => void }) {
   const change = useChangeCrew(crew.id);
-  const { name, phone, siteId, hourlyRate, pattern, active } = crew;
+  const { name, phone, siteId, hourlyRate, pattern, toleranceProfile, active } = crew;
   return (
     <FormSheet
       title={`Change ${name}`}
       schema={changeCrewBody}
-      defaults={{ name, phone, siteId, hourlyRate, pattern, active }}
+      defaults={{ name, phone, siteId, hourlyRate, pattern, toleranceProfile, active }}
       button="Save"
       save={change.mutateAsync}
       onDone={onDone}

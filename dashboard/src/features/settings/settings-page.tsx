@@ -6,6 +6,7 @@ import { ChoiceField, NumberField, TextField } from '../../components/form-field
 import { ListPage } from '../../components/list-page';
 import { HolidaysPart } from './holidays-part';
 import { PreviewPart } from './preview-part';
+import { OtherProfiles, ProfileFields } from './profile-fields';
 import './settings.css';
 import { PatternFields } from '../../components/pattern-fields';
 import { settingsQuery, useChangeSettings } from '../../lib/settings';
@@ -43,11 +44,11 @@ function ToleranceFields() {
   return (
     <fieldset className="limits">
       <legend>Tolerance profile</legend>
-      <p>Fixed time counts as within tolerance while all of these hold.</p>
-      <TextField name="toleranceProfile.name" label="Name" required />
-      <NumberField name="toleranceProfile.maxAgeSeconds" label="Age of corrections to, s" required />
-      <NumberField name="toleranceProfile.maxHdop" label="HDOP to" required />
-      <NumberField name="toleranceProfile.minSatellites" label="Satellites from" required />
+      <p>
+        Fixed time counts as within tolerance while all of these hold. This one counts for every crew that has
+        none of its own.
+      </p>
+      <ProfileFields name="toleranceProfile" />
     </fieldset>
   );
 }
@@ -125,6 +126,7 @@ function SettingsForm({ current }: { current: ShownSettings }) {
         />
         <LimitFields />
         <ToleranceFields />
+        <OtherProfiles />
         <CheckShotFields />
         <PreviewPart />
         <NumberField
