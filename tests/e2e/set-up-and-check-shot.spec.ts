@@ -42,7 +42,7 @@ async function standOnMark(stationId = 1): Promise<void> {
     body += gga(now - back * 1000, 4, {
       ...mark,
       latitude: mark.latitude + 0.009 / 111_132,
-      altitudeM: 40,
+      altitudeM: 40.2,
       stationId,
     });
   await postSentences(server.url, rover.key, body);
@@ -63,14 +63,21 @@ it('a chief fills the card, is asked about the pole, checks into control, and th
   await page.getByRole('button', { name: 'Keep the card' }).click();
   await page.getByText('The pole was 1.800 m on the card before and is 2.000 m now').waitFor();
   await expectAccessible(page);
-  // It was 1.8 all along.
-  await page.getByLabel('Pole height, m').fill('1.8');
+  // A tick for one height is none for another.
+  await page.getByLabel('I have looked again').check();
+  await page.getByLabel('Pole height, m').fill('2.3');
+  await page.getByRole('button', { name: 'Keep the card' }).click();
+  await page.getByText('is 2.300 m now').waitFor();
+  await page.getByLabel('Pole height, m').fill('2,0');
+  await page.getByRole('button', { name: 'Keep the card' }).click();
+  await page.getByText('is 2.000 m now').waitFor();
+  await page.getByLabel('I have looked again').check();
   await page.getByRole('button', { name: 'Keep the card' }).click();
   await page.getByRole('heading', { name: 'The card is kept' }).waitFor();
 
   await standOnMark();
   await page.getByRole('link', { name: 'Check into control now' }).click();
-  await page.getByLabel('Control point').selectOption({ label: 'PM 1207, 0 m' });
+  await page.getByRole('combobox', { name: 'Control point' }).selectOption({ label: 'PM 1207, 0 m' });
   await page.getByRole('button', { name: 'Look at it' }).click();
   await page.getByText(/^Passed: 9 mm off in plan/).waitFor();
   await expectAccessible(page);
@@ -93,7 +100,7 @@ it('a chief fills the card, is asked about the pole, checks into control, and th
   await sheet.getByText('PM 1207').waitFor();
   await expectAccessible(office.page);
   await office.page.goto(`${server.url}/rovers/${rover.id}`);
-  await office.page.getByRole('table', { name: 'Set-up cards' }).getByText('1.800 m').first().waitFor();
+  await office.page.getByRole('table', { name: 'Set-up cards' }).getByText('2.000 m').first().waitFor();
   expect(office.errors).toEqual([]);
 });
 
@@ -109,9 +116,9 @@ it('without signal a card waits on the phone, and arrives once', async () => {
   await page.getByRole('button', { name: 'Keep the card' }).click();
   await page.getByRole('heading', { name: 'The card waits on this phone' }).waitFor();
   await page.getByRole('link', { name: 'My crew' }).first().click();
-  await page.getByText('Set-up card, pole 1.800 m').waitFor();
+  await page.getByText('Set-up card, pole 2.000 m').waitFor();
   await page.context().setOffline(false);
-  await expect.poll(() => page.getByText('Set-up card, pole 1.800 m').count(), { timeout: 30_000 }).toBe(0);
+  await expect.poll(() => page.getByText('Set-up card, pole 2.000 m').count(), { timeout: 30_000 }).toBe(0);
   const technician = new Client(server.url);
   await technician.signIn('technician@pennywort.example', 'tack-in-the-hub');
   const { cards } = await technician.json<{ cards: { note: string | null }[] }>(

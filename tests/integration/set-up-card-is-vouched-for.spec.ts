@@ -1,3 +1,4 @@
+import type { Lane } from '@hubtack/contracts/board/lane.js';
 import type { Ground, SetUpCard, SetUpStart } from '@hubtack/contracts/set-up/set-up-card.js';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { postSentences, type Client, type TestRover } from '../harness/client.js';
@@ -35,9 +36,7 @@ const add = (change: Record<string, unknown> = {}, key?: string) =>
   chief.call('POST', '/api/set-up-cards', body(change), key === undefined ? {} : { 'idempotency-key': key });
 const cards = async () =>
   (await chief.json<{ cards: SetUpCard[] }>('GET', `/api/set-up-cards?roverId=${rover.id}`)).cards;
-const lane = async () =>
-  (await chief.json<{ lanes: { setUp: { at: number; by: string } | null }[] }>('GET', '/api/board'))
-    .lanes[0]!;
+const lane = async () => (await chief.json<{ lanes: Pick<Lane, 'setUp'>[] }>('GET', '/api/board')).lanes[0]!;
 
 describe('a set-up card', () => {
   it('is kept with who vouched for it, offered as a start, and seen on the board that day', async () => {
@@ -53,7 +52,7 @@ describe('a set-up card', () => {
         confirmed: [],
       },
     ]);
-    expect((await lane()).setUp).toEqual({ at: NINE, by: 'crewChief' });
+    expect((await lane()).setUp).toEqual({ at: NINE, by: 'crewChief', poleHeightM: 1.8 });
     server.clock.set(NINE + 24 * HOUR);
     await chief.signIn(`crewchief${crewId}@pennywort.example`, PASSWORD);
     const start = await chief.json<SetUpStart>('GET', `/api/set-up-cards/start?roverId=${rover.id}`);

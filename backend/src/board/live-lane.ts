@@ -104,7 +104,7 @@ export function laneOf(facts: LaneFacts, now: number): Lane {
     crewPhone: entry.crewPhone,
     siteName: entry.siteName,
     mountPoint: entry.mountPoint,
-    setUp: badge?.card ? { at: badge.card.at, by: badge.card.by } : null,
+    setUp: badge?.card ? { at: badge.card.at, by: badge.card.by, poleHeightM: badge.card.poleHeightM } : null,
     checkShot: badge?.shot
       ? {
           at: badge.shot.at,

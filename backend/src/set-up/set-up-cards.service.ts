@@ -9,8 +9,10 @@ import type {
   SetUpCardBody,
   SetUpStart,
 } from '@hubtack/contracts/set-up/set-up-card.js';
+import { profileOf } from '@hubtack/contracts/weekly/tolerance-profile.js';
 import type { HubtackDatabase } from '@hubtack/drizzle/database.js';
 import { correctionSources } from '@hubtack/drizzle/schema/correction-sources.js';
+import { crews } from '@hubtack/drizzle/schema/crews.js';
 import { rovers } from '@hubtack/drizzle/schema/rovers.js';
 import { asc, eq } from 'drizzle-orm';
 import { AuditService } from '../audit/audit.service.js';
@@ -54,6 +56,7 @@ export class SetUpCardsService {
   start(viewer: Viewer, roverId: number): SetUpStart {
     this.access.visibleFrom(viewer, roverId);
     const rover = this.database.select().from(rovers).where(eq(rovers.id, roverId)).get()!;
+    const settings = this.settings.get();
     return {
       // Also of the crew before: the pole goes with the rover.
       card: this.cards.ofRover(roverId, 0, 1)[0] ?? null,
@@ -67,8 +70,16 @@ export class SetUpCardsService {
         .orderBy(asc(correctionSources.name))
         .all(),
       correctionSourceId: rover.correctionSourceId,
-      toleranceProfile: this.settings.get().toleranceProfile.name,
+      toleranceProfile: profileOf(settings, this.profileNameOf(roverId)).name,
+      profiles: [settings.toleranceProfile, ...settings.otherProfiles].map(({ name }) => name),
     };
+  }
+
+  /** Of the crew that has it now. */
+  private profileNameOf(roverId: number): string | null {
+    const crewId = this.cards.crewAt(roverId, this.clock.now());
+    if (crewId === null) return null;
+    return this.database.select().from(crews).where(eq(crews.id, crewId)).get()?.toleranceProfile ?? null;
   }
 
   ground(viewer: Viewer, { roverId, ...pole }: GroundQuery): Ground {

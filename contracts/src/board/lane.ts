@@ -47,7 +47,7 @@ export const lane = laneChange.extend({
   siteName: z.string().nullable(),
   mountPoint: z.string().nullable(),
   /** Today's newest set-up card of the rover. */
-  setUp: z.object({ at: instantMs, by: z.string() }).nullable(),
+  setUp: z.object({ at: instantMs, by: z.string(), poleHeightM: z.number() }).nullable(),
   /** Its newest check shot of the last days; `again` says why it does not count any more. */
   checkShot: z
     .object({

@@ -83,7 +83,8 @@ export const setUpStart = z.object({
   card: setUpCard.nullable().describe('The newest there is'),
   choices: z.array(z.object({ id, name: z.string(), mountPoint: z.string() })),
   correctionSourceId: id.nullable().describe('What the office has set for the rover'),
-  toleranceProfile: z.string().describe('The firm’s'),
+  toleranceProfile: z.string().describe('What the crew’s work is judged by'),
+  profiles: z.array(z.string()),
 });
 export type SetUpStart = z.infer<typeof setUpStart>;
 

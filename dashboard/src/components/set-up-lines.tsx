@@ -11,7 +11,8 @@ export function SetUpLines({ lane, zone }: { lane: Pick<Lane, 'setUp' | 'checkSh
       <p data-missing={!lane.setUp}>
         {lane.setUp ? (
           <span title={utc(lane.setUp.at)}>
-            Set up {clockTime(lane.setUp.at, zone)}, by {lane.setUp.by}
+            Set up {clockTime(lane.setUp.at, zone)}, pole {lane.setUp.poleHeightM.toFixed(3)} m, by{' '}
+            {lane.setUp.by}
           </span>
         ) : (
           'No set-up card today'

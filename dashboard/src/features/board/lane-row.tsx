@@ -50,7 +50,7 @@ export const LaneRow = memo(function LaneRow({ id, isOpen, onOpen }: LaneRowProp
       data-need={need}
       data-open={isOpen}
       role="row"
-      aria-label={[name, lane.roverLabel, check?.short].filter(Boolean).join(', ')}
+      aria-label={[name, lane.roverLabel, check?.long].filter(Boolean).join(', ')}
     >
       <span className="lane-glyph" role="cell">
         <StateGlyph state={state} size={22} />

@@ -21,11 +21,14 @@ export default function RoversPage() {
       what="the rovers"
       query={query}
       action={
-        mayChange && (
-          <Button appearance="primary" onClick={() => setIsAdding(true)}>
-            Add a rover
-          </Button>
-        )
+        <div className="page-actions">
+          <Link to="/check-shots">Checks of a day</Link>
+          {mayChange && (
+            <Button appearance="primary" onClick={() => setIsAdding(true)}>
+              Add a rover
+            </Button>
+          )}
+        </div>
       }
     >
       {(rovers) => (

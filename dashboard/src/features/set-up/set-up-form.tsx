@@ -19,6 +19,7 @@ import { useFormContext } from 'react-hook-form';
 import type { z } from 'zod';
 import { ChoiceField, NoteField, NumberField, TextField } from '../../components/form-fields';
 import { Form } from '../../components/form';
+import { ApiError } from '../../lib/api';
 import { useMe } from '../../lib/session';
 import { cardChanges, type CardValues } from '../../lib/card-changes';
 import { DoubtQuestions } from './doubt-questions';
@@ -34,13 +35,17 @@ interface SetUpFormProps {
   /** The card that it starts from; null for an empty one. */
   from: SetUpCard | null;
   save: (body: SetUpCardBody) => Promise<unknown>;
+  /** The newest card as the server has it now. */
+  readNewest: () => Promise<SetUpCard | null>;
 }
 
 /** How the rover is set up this morning, against the card before. */
-export function SetUpForm({ roverId, start, from, save }: SetUpFormProps) {
+export function SetUpForm({ roverId, start, from, save, readNewest }: SetUpFormProps) {
   const me = useMe();
-  const [asked, setAsked] = useState<readonly { doubt: SetUpDoubt; words: string }[]>([]);
-  const [confirmed, setConfirmed] = useState<readonly SetUpDoubt[]>([]);
+  const [newest, setNewest] = useState(start.card);
+  const [asked, setAsked] = useState<readonly string[]>([]);
+  // By the words, figures and all: a tick for one height is none for another.
+  const [confirmed, setConfirmed] = useState<readonly string[]>([]);
   const defaults: Partial<z.input<typeof setUpCardBody>> = {
     roverId,
     ...(from ? { poleHeightM: from.poleHeightM } : {}),
@@ -54,15 +59,27 @@ export function SetUpForm({ roverId, start, from, save }: SetUpFormProps) {
     note: null,
     confirmed: [],
   };
+  const ask = (body: SetUpCardBody, before: SetUpCard | null): SetUpDoubt[] => {
+    const doubts = doubtsOf(body, before);
+    const questions = doubts.map((doubt) => doubtWords(doubt, body, before));
+    setAsked(questions);
+    setConfirmed(confirmed.filter((words) => questions.includes(words)));
+    if (questions.some((words) => !confirmed.includes(words)))
+      throw new Error('Look again at what is asked, and tick it when it is right.');
+    return doubts;
+  };
   const submit = async (body: SetUpCardBody) => {
-    const doubts = doubtsOf(body, start.card);
-    const open = doubts.filter(
-      (doubt) => !confirmed.includes(doubt) || !asked.some((one) => one.doubt === doubt),
-    );
-    setAsked(doubts.map((doubt) => ({ doubt, words: doubtWords(doubt, body, start.card) })));
-    setConfirmed(confirmed.filter((doubt) => doubts.includes(doubt)));
-    if (open.length > 0) throw new Error('Look again at what is asked, and tick it when it is right.');
-    await save({ ...body, confirmed: doubts });
+    const doubts = ask(body, newest);
+    try {
+      await save({ ...body, confirmed: doubts });
+    } catch (error) {
+      if (!(error instanceof ApiError && error.code === 'needsConfirmation')) throw error;
+      // Another card has been kept meanwhile: this one is compared with that.
+      const before = await readNewest();
+      setNewest(before);
+      ask(body, before);
+      throw error;
+    }
   };
   return (
     <Form schema={setUpCardBody} defaults={defaults} button="Keep the card" submit={submit}>
@@ -91,7 +108,14 @@ export function SetUpForm({ roverId, start, from, save }: SetUpFormProps) {
           options={options(correctionFormats, correctionFormatLabels)}
           as="text"
         />
-        <TextField name="toleranceProfile" label="Tolerance profile" />
+        <ChoiceField
+          name="toleranceProfile"
+          label="Tolerance profile"
+          options={[
+            ...new Set([...start.profiles, ...(from?.toleranceProfile ? [from.toleranceProfile] : [])]),
+          ].map((name) => ({ value: name, label: name }))}
+          none="not said"
+        />
       </div>
       <TextField name="checkedBy" label="Checked by" required />
       <NoteField name="note" label="Note (may be left empty)" />
@@ -99,8 +123,8 @@ export function SetUpForm({ roverId, start, from, save }: SetUpFormProps) {
       <DoubtQuestions
         asked={asked}
         confirmed={confirmed}
-        onConfirm={(doubt, isConfirmed) =>
-          setConfirmed(isConfirmed ? [...confirmed, doubt] : confirmed.filter((one) => one !== doubt))
+        onConfirm={(words, isConfirmed) =>
+          setConfirmed(isConfirmed ? [...confirmed, words] : confirmed.filter((one) => one !== words))
         }
       />
     </Form>

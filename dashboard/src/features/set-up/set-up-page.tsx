@@ -1,6 +1,6 @@
 import { Button } from '@fluentui/react-components';
 import type { SetUpCard, SetUpCardBody, SetUpStart } from '@hubtack/contracts/set-up/set-up-card.js';
-import { useQuery } from '@tanstack/react-query';
+import { useQuery, useQueryClient } from '@tanstack/react-query';
 import { useState } from 'react';
 import { Link, useParams } from 'react-router-dom';
 import { Failed, Loading } from '../../components/query-states';
@@ -23,6 +23,7 @@ export default function SetUpPage() {
 function SetUp({ roverId, start }: { roverId: number; start: SetUpStart }) {
   const { role, timeZone } = useMe();
   const save = useSaveCard();
+  const client = useQueryClient();
   // The card as it was when somebody began: a newer one must not change the form under the hand.
   const [begun] = useState(start);
   const [from, setFrom] = useState<SetUpCard | 'empty' | null>(begun.card ? null : 'empty');
@@ -70,6 +71,7 @@ function SetUp({ roverId, start }: { roverId: number; start: SetUpStart }) {
           start={begun}
           from={from === 'empty' || from === null ? null : from}
           save={keep}
+          readNewest={() => client.fetchQuery(setUpStartQuery(roverId)).then(({ card }) => card)}
         />
       )}
       <p className="caution">

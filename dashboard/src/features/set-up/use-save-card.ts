@@ -1,7 +1,7 @@
 import type { SetUpCard, SetUpCardBody } from '@hubtack/contracts/set-up/set-up-card.js';
 import { useQueryClient } from '@tanstack/react-query';
 import { ApiError } from '../../lib/api';
-import { sendSetUpCard, setUpKey, setUpPath } from '../../lib/set-up';
+import { sendSetUpCard, setUpKey, setUpPath, setUpStartQuery } from '../../lib/set-up';
 import { useMe } from '../../lib/session';
 import { newId } from '../../offline/new-id';
 import { taps } from '../../offline/taps';
@@ -9,7 +9,7 @@ import { taps } from '../../offline/taps';
 /** Sends a card; without signal a chief's phone keeps it and sends it later. Answers which of the two. */
 export function useSaveCard() {
   const client = useQueryClient();
-  const { role, userId } = useMe();
+  const { role, userId, name } = useMe();
   return async (card: SetUpCardBody): Promise<{ saved: SetUpCard } | 'waiting'> => {
     const at = Date.now();
     const body = { ...card, at: new Date(at).toISOString() };
@@ -27,6 +27,21 @@ export function useSaveCard() {
     await taps.add([
       { id, userId: userId!, at, words, kind: 'setUp', url: setUpPath, body, under: null, refusal: null },
     ]);
+    // The next one on this phone is compared with the one that waits.
+    client.setQueryData(setUpStartQuery(card.roverId).queryKey, (start) => {
+      if (!start) return start;
+      const source = start.choices.find((one) => one.id === card.correctionSourceId);
+      const waiting: SetUpCard = {
+        ...body,
+        id: start.card?.id ?? 0,
+        roverLabel: start.card?.roverLabel ?? '',
+        crewId: null,
+        by: name,
+        sourceName: source?.name ?? null,
+        mountPoint: source?.mountPoint ?? null,
+      };
+      return { ...start, card: waiting };
+    });
     return 'waiting';
   };
 }
