@@ -13,6 +13,7 @@ import { judgeFormats } from './formats.js';
 import { judgeBase, judgeData, judgePosition, judgeRefusal, judgeSilence } from './judge.js';
 import { Progress } from './report.js';
 import { nearestSpellings } from './spellings.js';
+import { tableWords } from './table-words.js';
 import { lookAtStream, type Look, type LookLimits } from './stream-look.js';
 
 /** What is checked, and what it is compared with. */
@@ -300,10 +301,6 @@ class Walk {
     progress.pass('base', verdict.seen, verdict.warnings);
   }
 }
-
-const counted = (count: number, name: string): string => `${count} ${name}${count === 1 ? '' : 's'}`;
-const tableWords = ({ STR, CAS, NET }: { STR: number; CAS: number; NET: number }): string =>
-  `${counted(STR, 'mount point')}, ${counted(CAS, 'caster')}, ${counted(NET, 'network')}.`;
 
 /** So many mount points by distance are enough to choose from; the list has them all. */
 const NEAREST = 5;
